@@ -1,0 +1,2 @@
+export const ROLES = ['owner', 'designer', 'reviewer', 'viewer'] as const;
+export type Role = (typeof ROLES)[number];
