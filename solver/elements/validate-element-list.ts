@@ -1,7 +1,59 @@
-import type { ElementList } from './element-list';
+import type { UnknownFields } from './element-definition';
+import type { Element, ElementList } from './element-list';
+import { elementKinds, faultOfFields, isElementKind } from './registry';
 
 export type ElementListResult =
   | { readonly ok: true; readonly list: ElementList }
+  /** One sentence that names the element at fault (by id, or by place where it has none) and what it lacks. */
   | { readonly ok: false; readonly message: string };
 
-export declare function validateElementList(value: unknown): ElementListResult;
+/** Bounds on what is taken in; a hand-drawn network is far below them. */
+const MOST_ELEMENTS = 20_000;
+const LONGEST_NAME = 200;
+
+/**
+ * Checks that a value from outside is an element list, version 1: the shape, the kinds, two named nodes each, finite
+ * numbers, unique ids. Fields that are not known are passed over. Whether the network has a solution is not asked
+ * here. Gives the same object back, typed.
+ */
+export function validateElementList(value: unknown): ElementListResult {
+  if (!isRecord(value)) return refuse('An element list is an object with a version and elements.');
+  if (value['version'] !== 1) return refuse('The element list must be version 1.');
+  const { elements } = value;
+  if (!Array.isArray(elements)) return refuse('The element list must have an array of elements.');
+  if (elements.length > MOST_ELEMENTS) return refuse(`The element list has more than ${MOST_ELEMENTS} elements.`);
+  const ids = new Set<string>();
+  for (const [place, element] of (elements as readonly unknown[]).entries()) {
+    const fault = faultOf(element, place, ids);
+    if (fault !== undefined) return refuse(fault);
+  }
+  return { ok: true, list: { version: 1, elements: elements as readonly Element[] } };
+}
+
+function faultOf(element: unknown, place: number, ids: Set<string>): string | undefined {
+  if (!isRecord(element)) return `Element ${place + 1} of the list is not an object.`;
+  const { id, kind, nodes } = element;
+  if (!isName(id)) return `Element ${place + 1} of the list needs an id of 1 to ${LONGEST_NAME} characters.`;
+  if (ids.has(id)) return `The id ${id} is given twice; every element needs its own.`;
+  ids.add(id);
+  if (typeof kind !== 'string' || !isElementKind(kind)) {
+    return `Element ${id} has no known kind; the kinds are ${elementKinds().join(', ')}.`;
+  }
+  if (!Array.isArray(nodes) || nodes.length !== 2 || !nodes.every(isName)) {
+    return `Element ${id} needs two nodes, each a name of 1 to ${LONGEST_NAME} characters.`;
+  }
+  const fault = faultOfFields(kind, element);
+  return fault === undefined ? undefined : `Element ${id} ${fault}.`;
+}
+
+function isRecord(value: unknown): value is UnknownFields {
+  return typeof value === 'object' && value !== null && !Array.isArray(value);
+}
+
+function isName(value: unknown): value is string {
+  return typeof value === 'string' && value.length > 0 && value.length <= LONGEST_NAME;
+}
+
+function refuse(message: string): ElementListResult {
+  return { ok: false, message };
+}
