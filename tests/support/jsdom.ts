@@ -10,3 +10,11 @@ class SilentResizeObserver implements ResizeObserver {
   disconnect(): void {}
 }
 globalThis.ResizeObserver ??= SilentResizeObserver;
+
+// jsdom knows the dialog element but not its modal showing; here it is open or not, without the top layer.
+HTMLDialogElement.prototype.showModal ??= function showModal(this: HTMLDialogElement): void {
+  this.setAttribute('open', '');
+};
+HTMLDialogElement.prototype.close ??= function close(this: HTMLDialogElement): void {
+  this.removeAttribute('open');
+};
