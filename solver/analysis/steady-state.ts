@@ -1,10 +1,116 @@
+import { Complex } from 'complex.js';
 import type { ElementList } from '../elements/element-list';
+import { validateElementList } from '../elements/validate-element-list';
+import { Engine } from './engine';
 import type { Problem } from './problem';
-import type { Solution } from './solution';
+import { problem } from './problem';
+import type { PowerBalance, Solution } from './solution';
+import { residualOf } from './residual';
 
 export interface SolveOptions {
   /** The operating frequency, hertz; 0 is allowed. */
   readonly frequency: number;
 }
 
-export declare function solve(list: ElementList, options: SolveOptions): Solution | Problem;
+/** The fault of a frequency, in words, or undefined. */
+export function faultOfFrequency(frequency: unknown): string | undefined {
+  if (typeof frequency !== 'number' || !Number.isFinite(frequency)) return 'The frequency must be a finite number of hertz.';
+  return frequency < 0 ? 'The frequency must not be negative.' : undefined;
+}
+
+/**
+ * The sinusoidal steady state of a network at one frequency.
+ *
+ * A source whose own frequency is not the operating one is dead: a voltage source is an ideal connection, a current
+ * source is open. At 0 Hz a capacitor is open and an inductor an ideal connection, exactly. A zero resistance or
+ * inductance is an ideal connection, a zero capacitance open; negative values are solved as they stand.
+ *
+ * What can be solved is solved: the answer is a `Solution` whose `problems` say what is not determined, and a bare
+ * `Problem` only for a faulty list and where nothing is determined. A part of the network without a reference node
+ * has currents, powers and element voltages, but no node voltages. Never throws, and never answers with a number that
+ * is not finite.
+ *
+ * Method: nodal form with given voltages kept as such, by star-mesh elimination without a stored diagonal (see
+ * `StarMesh`); where a pivot cancels, branch form with complete pivoting (see `solveInBranchForm`).
+ */
+export function solve(list: ElementList, options: SolveOptions): Solution | Problem {
+  const checked = validateElementList(list);
+  if (!checked.ok) return problem('invalid', [], [], checked.message);
+  const { frequency } = options;
+  const fault = faultOfFrequency(frequency);
+  if (fault !== undefined) return problem('invalid', [], [], fault);
+  const engine = new Engine(checked.list);
+  const problems = engine.solveAt(frequency);
+  const [worst] = problems;
+  if (worst !== undefined && !isAnythingKnown(engine)) return worst;
+  return toSolution(engine, frequency, problems);
+}
+
+/** Whether any element's current, or any node's voltage but the reference's, is determined. */
+export function isAnythingKnown({ readings }: Engine): boolean {
+  return readings.iKnown.includes(1) || readings.vKnown.includes(1, 1);
+}
+
+function toSolution(engine: Engine, frequency: number, problems: readonly Problem[]): Solution {
+  const { network, branches, readings } = engine;
+  const { nodeIndex, elementIndex } = network;
+
+  const voltage = (node: string): Complex | undefined => {
+    const at = nodeIndex.get(node);
+    return at === undefined || readings.vKnown[at] !== 1 ? undefined : complex(readings.vRe[at], readings.vIm[at]);
+  };
+  const elementVoltage = (id: string): Complex | undefined => {
+    const at = elementIndex.get(id);
+    return at === undefined || readings.dKnown[at] !== 1 ? undefined : complex(readings.dRe[at], readings.dIm[at]);
+  };
+  const current = (id: string): Complex | undefined => {
+    const at = elementIndex.get(id);
+    return at === undefined || readings.iKnown[at] !== 1 ? undefined : complex(readings.iRe[at], readings.iIm[at]);
+  };
+  const power = (id: string): Complex | undefined => {
+    const at = elementIndex.get(id);
+    if (at === undefined) return undefined;
+    if (readings.dKnown[at] === 1 && readings.iKnown[at] === 1) return powerOf(engine, at);
+    // Nothing times something finite: an open circuit's voltage, or an ideal connection's current, need not be known.
+    const nothing = branches.form[at] !== 0 && branches.isGivenZero(at) && engine.isSolved(at);
+    return nothing ? complex(0, 0) : undefined;
+  };
+  return {
+    ok: true,
+    frequency,
+    voltage,
+    elementVoltage,
+    current,
+    power,
+    residual: residualOf(engine),
+    balance: balanceOf(engine),
+    problems,
+  };
+}
+
+/** Adding zero makes −0 a plain 0, which no reader of a value should have to think of. */
+function complex(re: number | undefined, im: number | undefined): Complex {
+  return new Complex((re ?? 0) + 0, (im ?? 0) + 0);
+}
+
+function powerOf({ readings }: Engine, row: number): Complex {
+  const dRe = readings.dRe[row] ?? 0;
+  const dIm = readings.dIm[row] ?? 0;
+  const iRe = readings.iRe[row] ?? 0;
+  const iIm = readings.iIm[row] ?? 0;
+  return complex(dRe * iRe + dIm * iIm, dIm * iRe - dRe * iIm);
+}
+
+function balanceOf(engine: Engine): PowerBalance {
+  let re = 0;
+  let im = 0;
+  let scale = 0;
+  for (let row = 0; row < engine.network.elements.length; row++) {
+    if (!engine.isSolved(row)) continue;
+    const power = powerOf(engine, row);
+    re += power.re;
+    im += power.im;
+    scale += Math.hypot(power.re, power.im);
+  }
+  return { sum: complex(re, im), scale };
+}

@@ -1,0 +1,37 @@
+/**
+ * Everything that a solution holds, in typed arrays by node and by element row. A `…Known` flag of 0 says that the
+ * value beside it is not determined; a value may stand there all the same, of a particular solution that the power
+ * balance is summed from.
+ */
+export class Readings {
+  /** Node voltages over the reference node (over the root in a component without it), V rms. */
+  readonly vRe: Float64Array;
+  readonly vIm: Float64Array;
+  readonly vKnown: Uint8Array;
+  /** Element voltages, first node over second, V rms. */
+  readonly dRe: Float64Array;
+  readonly dIm: Float64Array;
+  readonly dKnown: Uint8Array;
+  /** Element currents, first node to second, A rms. */
+  readonly iRe: Float64Array;
+  readonly iIm: Float64Array;
+  readonly iKnown: Uint8Array;
+
+  constructor(nodeCount: number, rowCount: number) {
+    this.vRe = new Float64Array(nodeCount);
+    this.vIm = new Float64Array(nodeCount);
+    this.vKnown = new Uint8Array(nodeCount);
+    this.dRe = new Float64Array(rowCount);
+    this.dIm = new Float64Array(rowCount);
+    this.dKnown = new Uint8Array(rowCount);
+    this.iRe = new Float64Array(rowCount);
+    this.iIm = new Float64Array(rowCount);
+    this.iKnown = new Uint8Array(rowCount);
+  }
+
+  /** Forgets everything, for the next frequency. */
+  clear(): void {
+    for (const values of [this.vRe, this.vIm, this.dRe, this.dIm, this.iRe, this.iIm]) values.fill(0);
+    for (const flags of [this.vKnown, this.dKnown, this.iKnown]) flags.fill(0);
+  }
+}

@@ -1,0 +1,186 @@
+import type { BranchTable } from '../elements/branch-table';
+import { solveInBranchForm } from './branch-form';
+import { floatingProblem, rangeProblem, singularProblem, tooLargeProblem, voltageLoopProblem } from './diagnosis';
+import { currentsAgree, loopAgrees } from './given-voltages';
+import type { Network } from './network';
+import type { NodalForm } from './nodal-form';
+import type { Problem } from './problem';
+import type { Readings } from './readings';
+import type { Component, Structure } from './structure';
+
+/** What a component came to: whether its readings stand, and what is to be said of it. */
+export interface ComponentOutcome {
+  readonly solved: boolean;
+  readonly problems: readonly Problem[];
+}
+
+/** Values between these keep every product and quotient of the elimination within the range of the arithmetic. */
+const SMALLEST = 1e-140;
+const LARGEST = 1e140;
+
+/**
+ * Below this, cancellation in a pivot has cost so many digits that the branch form, which does not divide by it, is
+ * called in.
+ */
+const TRUSTED_PIVOT = 1e-7;
+
+/** Solves one component at one frequency and marks in the readings what is determined. */
+export function solveComponent(
+  network: Network,
+  structure: Structure,
+  component: Component,
+  nodal: NodalForm,
+  branches: BranchTable,
+  frequency: number,
+  readings: Readings,
+): ComponentOutcome {
+  const problems: Problem[] = [];
+  const outOfRange = rowsOutOfRange(component, branches);
+  if (outOfRange.length > 0) return { solved: false, problems: [rangeProblem(network, component, outOfRange)] };
+
+  let contradiction = false;
+  for (const loop of component.loops) {
+    const agrees = loopAgrees(network, structure, branches, loop);
+    if (!agrees) contradiction = true;
+    problems.push(voltageLoopProblem(network, loop, agrees));
+  }
+  if (!component.grounded) {
+    const agrees = netCurrentIsZero(network, structure, component, branches);
+    const live = component.outerCurrents.some((row) => !branches.isGivenZero(row));
+    const inReferenceIsland = structure.islandOf[component.nodes[0] ?? 0] === structure.referenceIsland;
+    if (!agrees) contradiction = true;
+    if (live || inReferenceIsland) problems.push(floatingProblem(network, branches, component, agrees));
+  }
+  if (contradiction) return { solved: false, problems };
+
+  const ratio = nodal.solve(branches, readings);
+  const unknown = { nodes: new Set<number>(), currents: new Set<number>(), voltages: new Set<number>() };
+  if (ratio < TRUSTED_PIVOT) {
+    const outcome = solveInBranchForm(network, component, branches, readings);
+    if (outcome === 'tooLarge') {
+      return { solved: false, problems: [...problems, tooLargeProblem(network, component, frequency)] };
+    }
+    if (outcome !== 'solved') {
+      problems.push(singularProblem(network, branches, component, outcome, frequency));
+      if (!outcome.consistent) return { solved: false, problems };
+      for (const node of outcome.nodes) unknown.nodes.add(node);
+      for (const row of outcome.currents) unknown.currents.add(row);
+      for (const row of outcome.voltages) unknown.voltages.add(row);
+    }
+  }
+
+  setGivenVoltages(network, structure, component, branches, readings);
+  if (!isFinite(component, readings)) {
+    return { solved: false, problems: [...problems, rangeProblem(network, component, [])] };
+  }
+  for (const node of component.nodes) readings.vKnown[node] = component.grounded && !unknown.nodes.has(node) ? 1 : 0;
+  for (const row of component.admittances) {
+    readings.iKnown[row] = unknown.currents.has(row) ? 0 : 1;
+    readings.dKnown[row] = unknown.voltages.has(row) ? 0 : 1;
+  }
+  for (const row of component.innerCurrents) {
+    readings.iKnown[row] = 1;
+    readings.dKnown[row] = unknown.voltages.has(row) ? 0 : 1;
+  }
+  for (const row of component.treeVoltages) {
+    readings.iKnown[row] = structure.onLoop[row] === 1 || unknown.currents.has(row) ? 0 : 1;
+    readings.dKnown[row] = 1;
+  }
+  for (const { closing } of component.loops) readings.dKnown[closing] = 1;
+  return { solved: true, problems };
+}
+
+function rowsOutOfRange(component: Component, branches: BranchTable): number[] {
+  const { yRe, yIm, sRe, sIm } = branches;
+  const inRange = (size: number): boolean => size >= SMALLEST && size <= LARGEST;
+  const faulty = component.admittances.filter(
+    (row) => !inRange(Math.max(Math.abs(yRe[row] ?? 0), Math.abs(yIm[row] ?? 0))),
+  );
+  const given = [
+    ...component.treeVoltages,
+    ...component.loops.map(({ closing }) => closing),
+    ...component.innerCurrents,
+    ...component.outerCurrents,
+  ];
+  for (const row of given) {
+    const size = Math.max(Math.abs(sRe[row] ?? 0), Math.abs(sIm[row] ?? 0));
+    if (size !== 0 && !inRange(size)) faulty.push(row);
+  }
+  return faulty;
+}
+
+/** Whether the given currents into a component without a reference add up to zero, as Kirchhoff's law wants. */
+function netCurrentIsZero(
+  { first }: Network,
+  { componentOf }: Structure,
+  component: Component,
+  branches: BranchTable,
+): boolean {
+  const net = { re: 0, im: 0 };
+  let size = 0;
+  for (const row of component.outerCurrents) {
+    const sign = componentOf[first[row] ?? 0] === component.index ? 1 : -1;
+    net.re += sign * (branches.sRe[row] ?? 0);
+    net.im += sign * (branches.sIm[row] ?? 0);
+    size += Math.hypot(branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
+  }
+  return currentsAgree(net, size);
+}
+
+/**
+ * The voltages of given-voltage rows as given, and their currents by Kirchhoff's current law from the leaves of their
+ * forest to its root. A row that closes a loop gets no current, which is one of the many that are possible.
+ */
+function setGivenVoltages(
+  { first, second }: Network,
+  structure: Structure,
+  component: Component,
+  branches: BranchTable,
+  readings: Readings,
+): void {
+  const leavingRe = new Map<number, number>();
+  const leavingIm = new Map<number, number>();
+  const leave = (node: number, re: number, im: number): void => {
+    leavingRe.set(node, (leavingRe.get(node) ?? 0) + re);
+    leavingIm.set(node, (leavingIm.get(node) ?? 0) + im);
+  };
+  for (const row of component.admittances) {
+    leave(first[row] ?? 0, readings.iRe[row] ?? 0, readings.iIm[row] ?? 0);
+    leave(second[row] ?? 0, -(readings.iRe[row] ?? 0), -(readings.iIm[row] ?? 0));
+  }
+  for (const row of [...component.innerCurrents, ...component.outerCurrents]) {
+    leave(first[row] ?? 0, branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
+    leave(second[row] ?? 0, -(branches.sRe[row] ?? 0), -(branches.sIm[row] ?? 0));
+  }
+  for (let at = component.treeVoltages.length - 1; at >= 0; at--) {
+    const row = component.treeVoltages[at] ?? 0;
+    const a = first[row] ?? 0;
+    const child = structure.parentRow[a] === row ? a : (second[row] ?? 0);
+    const parent = structure.parent[child] ?? 0;
+    const re = leavingRe.get(child) ?? 0;
+    const im = leavingIm.get(child) ?? 0;
+    const sign = child === a ? -1 : 1;
+    readings.iRe[row] = sign * re;
+    readings.iIm[row] = sign * im;
+    leave(parent, re, im);
+  }
+  const loopRows = component.loops.map(({ closing }) => closing);
+  for (const row of loopRows) {
+    readings.iRe[row] = 0;
+    readings.iIm[row] = 0;
+  }
+  for (const row of [...component.treeVoltages, ...loopRows]) {
+    readings.dRe[row] = branches.sRe[row] ?? 0;
+    readings.dIm[row] = branches.sIm[row] ?? 0;
+  }
+}
+
+function isFinite(component: Component, readings: Readings): boolean {
+  const { vRe, vIm, dRe, dIm, iRe, iIm } = readings;
+  const finite = (array: Float64Array, at: number): boolean => Number.isFinite(array[at]);
+  const rows = [...component.admittances, ...component.treeVoltages, ...component.innerCurrents];
+  return (
+    component.nodes.every((node) => finite(vRe, node) && finite(vIm, node)) &&
+    rows.every((row) => finite(dRe, row) && finite(dIm, row) && finite(iRe, row) && finite(iIm, row))
+  );
+}

@@ -1,0 +1,270 @@
+import type { BranchTable } from '../elements/branch-table';
+import { ADMITTANCE, GIVEN_CURRENT, GIVEN_VOLTAGE } from '../elements/branch-table';
+import { DisjointSets } from '../linear/disjoint-sets';
+import type { EliminationPlan } from '../linear/elimination-plan';
+import { planElimination } from '../linear/elimination-plan';
+import type { Network } from './network';
+import { REFERENCE } from './network';
+
+/**
+ * A conducting component: nodes that admittances and given voltages tie together. Between components there are only
+ * given currents and open circuits, so each is solved by itself.
+ */
+export interface Component {
+  readonly index: number;
+  /** Its nodes, the root first; the root is the reference node where the component has it. */
+  readonly nodes: readonly number[];
+  readonly grounded: boolean;
+  /** Rows with both ends in it that are admittances. */
+  readonly admittances: readonly number[];
+  /** Rows of given voltage that form a spanning forest of those, each after the one that leads to its parent. */
+  readonly treeVoltages: readonly number[];
+  /** Rows of given voltage that close a loop with the forest, with the forest's rows on that loop. */
+  readonly loops: readonly VoltageLoop[];
+  /** Rows of given current with both ends in it. */
+  readonly innerCurrents: readonly number[];
+  /** Rows of given current (open circuits too) with just one end in it. */
+  readonly outerCurrents: readonly number[];
+  /** How its nodal equations are solved. */
+  readonly plan: EliminationPlan;
+  /** For each admittance and inner current: its slot, or −1 where its ends are one vertex; see `vertexOf`. */
+  readonly slotOfRow: ReadonlyMap<number, number>;
+}
+
+export interface VoltageLoop {
+  readonly closing: number;
+  readonly path: readonly number[];
+}
+
+/** The graph of a network for one pattern of forms; it holds at every frequency with that pattern. */
+export interface Structure {
+  readonly components: readonly Component[];
+  readonly componentOf: Int32Array;
+  /** Sets of nodes that elements of any form join: one number a set. */
+  readonly islandOf: Int32Array;
+  /** The island of the reference node. */
+  readonly referenceIsland: number;
+  /** Nodes joined by given voltages of zero are one vertex; numbered within each component. */
+  readonly vertexOf: Int32Array;
+  /** A node for each component's vertices. */
+  readonly nodeOfVertex: readonly Int32Array[];
+  /** The forest of given voltages: each node's parent, or −1 at a root. */
+  readonly parent: Int32Array;
+  /** The row that leads to the parent, or −1. */
+  readonly parentRow: Int32Array;
+  readonly depth: Int32Array;
+  /** Rows of given voltage that lie on a loop of given voltages: their current is not determined. */
+  readonly onLoop: Uint8Array;
+}
+
+/** A text that is the same for two tables when their structure is. */
+export function patternOf(branches: BranchTable): string {
+  let pattern = '';
+  for (let row = 0; row < branches.size; row++) {
+    const form = branches.form[row] ?? ADMITTANCE;
+    pattern += form === ADMITTANCE ? 'y' : form === GIVEN_VOLTAGE ? 'v' : 'i';
+    if (form !== ADMITTANCE && branches.isGivenZero(row)) pattern += '0';
+  }
+  return pattern;
+}
+
+/** Finds components, the forest and loops of given voltages, and an elimination plan for each component. */
+export function analyseStructure(network: Network, branches: BranchTable): Structure {
+  const { first, second } = network;
+  const nodeCount = network.nodeNames.length;
+  const ends = (row: number): readonly [number, number] => [first[row] ?? 0, second[row] ?? 0];
+  const conducting = new DisjointSets(nodeCount);
+  const joined = new DisjointSets(nodeCount);
+  const merged = new DisjointSets(nodeCount);
+  const grouped = new DisjointSets(nodeCount);
+  for (let row = 0; row < branches.size; row++) {
+    const [a, b] = ends(row);
+    joined.union(a, b);
+    if (branches.form[row] === GIVEN_CURRENT) continue;
+    conducting.union(a, b);
+    if (branches.form[row] !== GIVEN_VOLTAGE) continue;
+    grouped.union(a, b);
+    if (branches.isGivenZero(row)) merged.union(a, b);
+  }
+
+  const forest = growForest(network, branches);
+  const componentOf = new Int32Array(nodeCount);
+  const nodesOf: number[][] = [];
+  const numberOf = new Map<number, number>();
+  for (let node = 0; node < nodeCount; node++) {
+    const set = conducting.find(node);
+    const known = numberOf.get(set);
+    const index = known ?? nodesOf.length;
+    if (known === undefined) {
+      numberOf.set(set, index);
+      nodesOf.push([]);
+    }
+    componentOf[node] = index;
+    nodesOf[index]?.push(node);
+  }
+
+  const vertexOf = new Int32Array(nodeCount);
+  const nodeOfVertex = nodesOf.map((nodes) => numberVertices(nodes, merged, vertexOf));
+  const rows = sortRows(network, branches, componentOf, forest, nodesOf.length);
+  const components = nodesOf.map((nodes, index): Component => {
+    const mine = rows[index] ?? emptyRows();
+    const inSlots = [...mine.admittances, ...mine.innerCurrents.filter((row) => !branches.isGivenZero(row))];
+    const pairs: [number, number][] = [];
+    const pairOfRow = new Map<number, number>();
+    for (const row of inSlots) {
+      const [a, b] = ends(row);
+      const one = vertexOf[a] ?? 0;
+      const other = vertexOf[b] ?? 0;
+      if (one === other) continue;
+      pairOfRow.set(row, pairs.length);
+      pairs.push(one < other ? [one, other] : [other, one]);
+    }
+    const representatives = nodeOfVertex[index] ?? new Int32Array(0);
+    const plan = planElimination({
+      vertexCount: representatives.length,
+      group: Int32Array.from(representatives, (node) => grouped.find(node)),
+      root: vertexOf[nodes[0] ?? 0] ?? 0,
+      pairs,
+    });
+    const slotOfRow = new Map(inSlots.map((row) => [row, slotOfPairRow(plan, pairOfRow.get(row))]));
+    return { index, nodes, grounded: nodes[0] === REFERENCE, ...mine, plan, slotOfRow };
+  });
+
+  return {
+    components,
+    componentOf,
+    islandOf: Int32Array.from({ length: nodeCount }, (_, node) => joined.find(node)),
+    referenceIsland: joined.find(REFERENCE),
+    vertexOf,
+    nodeOfVertex,
+    parent: forest.parent,
+    parentRow: forest.parentRow,
+    depth: forest.depth,
+    onLoop: forest.onLoop,
+  };
+}
+
+function slotOfPairRow(plan: EliminationPlan, pair: number | undefined): number {
+  return pair === undefined ? -1 : (plan.slotOfPair[pair] ?? -1);
+}
+
+interface Forest {
+  readonly parent: Int32Array;
+  readonly parentRow: Int32Array;
+  readonly depth: Int32Array;
+  /** Rows of the forest, parents before children. */
+  readonly order: readonly number[];
+  readonly loops: readonly VoltageLoop[];
+  readonly onLoop: Uint8Array;
+}
+
+/** A breadth-first spanning forest of the given voltages, rooted at the lowest node of each tree, and what closes loops. */
+function growForest({ first, second, nodeNames }: Network, branches: BranchTable): Forest {
+  const nodeCount = nodeNames.length;
+  const around: number[][] = Array.from({ length: nodeCount }, () => []);
+  for (let row = 0; row < branches.size; row++) {
+    if (branches.form[row] !== GIVEN_VOLTAGE) continue;
+    around[first[row] ?? 0]?.push(row);
+    around[second[row] ?? 0]?.push(row);
+  }
+  const parent = new Int32Array(nodeCount).fill(-1);
+  const parentRow = new Int32Array(nodeCount).fill(-1);
+  const depth = new Int32Array(nodeCount).fill(-1);
+  const order: number[] = [];
+  const closing = new Set<number>();
+  for (let root = 0; root < nodeCount; root++) {
+    if ((depth[root] ?? -1) >= 0) continue;
+    depth[root] = 0;
+    const queue = [root];
+    for (let node = queue.shift(); node !== undefined; node = queue.shift()) {
+      for (const row of around[node] ?? []) {
+        if (row === parentRow[node]) continue;
+        const other = first[row] === node ? (second[row] ?? 0) : (first[row] ?? 0);
+        if ((depth[other] ?? -1) >= 0) {
+          // The row to a child comes up again from the child's side only as its parent row.
+          if (parentRow[other] !== row) closing.add(row);
+          continue;
+        }
+        depth[other] = (depth[node] ?? 0) + 1;
+        parent[other] = node;
+        parentRow[other] = row;
+        order.push(row);
+        queue.push(other);
+      }
+    }
+  }
+  const onLoop = new Uint8Array(branches.size);
+  const loops = [...closing].map((row): VoltageLoop => {
+    const path = treePath(first[row] ?? 0, second[row] ?? 0, { parent, parentRow, depth });
+    for (const member of [row, ...path]) onLoop[member] = 1;
+    return { closing: row, path };
+  });
+  return { parent, parentRow, depth, order, loops, onLoop };
+}
+
+/** The forest's rows between two nodes of one tree. */
+function treePath(one: number, other: number, forest: Pick<Forest, 'parent' | 'parentRow' | 'depth'>): number[] {
+  const path: number[] = [];
+  let a = one;
+  let b = other;
+  while (a !== b) {
+    const climbsA = (forest.depth[a] ?? 0) >= (forest.depth[b] ?? 0);
+    const node = climbsA ? a : b;
+    path.push(forest.parentRow[node] ?? -1);
+    const up = forest.parent[node] ?? -1;
+    if (climbsA) a = up;
+    else b = up;
+  }
+  return path;
+}
+
+function numberVertices(nodes: readonly number[], merged: DisjointSets, vertexOf: Int32Array): Int32Array {
+  const representatives: number[] = [];
+  const numberOf = new Map<number, number>();
+  for (const node of nodes) {
+    const set = merged.find(node);
+    const known = numberOf.get(set);
+    vertexOf[node] = known ?? representatives.length;
+    if (known !== undefined) continue;
+    numberOf.set(set, representatives.length);
+    representatives.push(node);
+  }
+  return Int32Array.from(representatives);
+}
+
+interface ComponentRows {
+  readonly admittances: number[];
+  readonly treeVoltages: number[];
+  readonly loops: VoltageLoop[];
+  readonly innerCurrents: number[];
+  readonly outerCurrents: number[];
+}
+
+function emptyRows(): ComponentRows {
+  return { admittances: [], treeVoltages: [], loops: [], innerCurrents: [], outerCurrents: [] };
+}
+
+function sortRows(
+  { first, second }: Network,
+  branches: BranchTable,
+  componentOf: Int32Array,
+  forest: Forest,
+  componentCount: number,
+): ComponentRows[] {
+  const sorted = Array.from({ length: componentCount }, emptyRows);
+  for (let row = 0; row < branches.size; row++) {
+    const one = componentOf[first[row] ?? 0] ?? 0;
+    const other = componentOf[second[row] ?? 0] ?? 0;
+    if (branches.form[row] === ADMITTANCE) sorted[one]?.admittances.push(row);
+    if (branches.form[row] !== GIVEN_CURRENT) continue;
+    if (one === other) {
+      sorted[one]?.innerCurrents.push(row);
+    } else {
+      sorted[one]?.outerCurrents.push(row);
+      sorted[other]?.outerCurrents.push(row);
+    }
+  }
+  for (const row of forest.order) sorted[componentOf[first[row] ?? 0] ?? 0]?.treeVoltages.push(row);
+  for (const loop of forest.loops) sorted[componentOf[first[loop.closing] ?? 0] ?? 0]?.loops.push(loop);
+  return sorted;
+}

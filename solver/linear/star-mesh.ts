@@ -1,0 +1,246 @@
+import type { EliminationPlan } from './elimination-plan';
+
+/**
+ * Nodal equations solved by star-mesh elimination, with no stored diagonal.
+ *
+ * Between vertices i and j flows y_ij·(v_i − v_j) + J_ij, with y symmetric and J antisymmetric. Vertex k is taken out
+ * with a = Σ_l y_kl, w_l = y_kl / a:
+ *
+ *     y_lm ← y_lm + w_l·y_km        J_lm ← J_lm + w_l·J_km − w_m·J_kl
+ *
+ * and afterwards, in the reverse order,
+ *
+ *     v_k = Σ_l w_l·v_l − Σ_l J_kl / a        v_k − v_j = Σ_l w_l·(v_l − v_j) − Σ_l J_kl / a
+ *
+ * The diagonal of the nodal matrix is never formed: a node's admittance to the rest is summed afresh from what it is
+ * made of, so nothing small is lost in something large and nothing is subtracted but what physics subtracts. That is
+ * the idea of Grassmann, Taksar and Heyman for Markov chains (Operations Research 33 (1985) 1107,
+ * doi 10.1287/opre.33.5.1107); the star-mesh transform itself is Campbell's (1911) and Rosen's (1924). Carrying the
+ * sources on the slots, not as sums at the vertices, and the voltages between neighbours, not only those to the root,
+ * keeps the same property for sources and for small voltages between large ones.
+ *
+ * Cost: the square of a vertex's degree, once each way.
+ */
+export class StarMesh {
+  /** Admittance of each slot, S. Filled in by the caller, then worked upon. */
+  readonly yRe: Float64Array;
+  readonly yIm: Float64Array;
+  /** Source current of each slot from its low to its high vertex, A. Filled in by the caller, then worked upon. */
+  readonly jRe: Float64Array;
+  readonly jIm: Float64Array;
+  /** Voltage of each slot's low vertex over its high one, V. The caller fills in the plan's known slots. */
+  readonly dRe: Float64Array;
+  readonly dIm: Float64Array;
+  /** Voltage of each vertex over the root, V. The caller fills in the root's group. */
+  readonly vRe: Float64Array;
+  readonly vIm: Float64Array;
+  /** For each joining step, the known voltage of its vertex over the one joined to, V; filled in by the caller. */
+  readonly eRe: Float64Array;
+  readonly eIm: Float64Array;
+  private readonly wRe: Float64Array;
+  private readonly wIm: Float64Array;
+  private readonly uRe: Float64Array;
+  private readonly uIm: Float64Array;
+
+  constructor(readonly plan: EliminationPlan) {
+    const slots = plan.slotLow.length;
+    const steps = plan.stepVertex.length;
+    const neighbours = plan.neighbour.length;
+    [this.yRe, this.yIm, this.jRe, this.jIm] = fourOf(slots);
+    [this.dRe, this.dIm] = fourOf(slots);
+    [this.vRe, this.vIm] = fourOf(plan.vertexCount);
+    [this.eRe, this.eIm, this.uRe, this.uIm] = fourOf(steps);
+    [this.wRe, this.wIm] = fourOf(neighbours);
+  }
+
+  /** Sets admittances, sources and voltages to zero for the next frequency. */
+  clear(): void {
+    for (const array of [this.yRe, this.yIm, this.jRe, this.jIm]) array.fill(0);
+  }
+
+  /**
+   * Takes all vertices out. Answers the smallest size of a pivot against the sum of the sizes of its terms: near 0,
+   * what is left of it after cancellation is rounding error, and the solution is not to be trusted; 0 at once when a
+   * pivot is zero or not finite.
+   */
+  eliminate(): number {
+    const { plan } = this;
+    let smallest = 1;
+    for (let step = 0; step < plan.stepVertex.length; step++) {
+      if ((plan.stepInto[step] ?? -1) < 0) {
+        const ratio = this.takeOut(step);
+        if (!(ratio > 0)) return 0;
+        if (ratio < smallest) smallest = ratio;
+      } else {
+        this.joinForward(step);
+      }
+    }
+    return smallest;
+  }
+
+  /** Finds all voltages, last vertex taken out first. */
+  substitute(): void {
+    const { plan } = this;
+    for (let step = plan.stepVertex.length - 1; step >= 0; step--) {
+      if ((plan.stepInto[step] ?? -1) < 0) this.putBack(step);
+      else this.joinBack(step);
+    }
+  }
+
+  private takeOut(step: number): number {
+    const { plan, yRe, yIm, jRe, jIm, wRe, wIm } = this;
+    const { neighbour, neighbourSlot, target } = plan;
+    const vertex = plan.stepVertex[step] ?? 0;
+    const start = plan.neighbourStart[step] ?? 0;
+    const end = plan.neighbourStart[step + 1] ?? 0;
+    let aRe = 0;
+    let aIm = 0;
+    let size = 0;
+    let sumRe = 0;
+    let sumIm = 0;
+    for (let at = start; at < end; at++) {
+      const slot = neighbourSlot[at] ?? 0;
+      const re = yRe[slot] ?? 0;
+      const im = yIm[slot] ?? 0;
+      aRe += re;
+      aIm += im;
+      size += Math.abs(re) + Math.abs(im);
+      const sign = (neighbour[at] ?? 0) > vertex ? 1 : -1;
+      sumRe += sign * (jRe[slot] ?? 0);
+      sumIm += sign * (jIm[slot] ?? 0);
+    }
+    const square = aRe * aRe + aIm * aIm;
+    if (!(square > 0) || square === Infinity) return 0;
+    const inverseRe = aRe / square;
+    const inverseIm = -aIm / square;
+    this.uRe[step] = sumRe * inverseRe - sumIm * inverseIm;
+    this.uIm[step] = sumRe * inverseIm + sumIm * inverseRe;
+    for (let at = start; at < end; at++) {
+      const slot = neighbourSlot[at] ?? 0;
+      const re = yRe[slot] ?? 0;
+      const im = yIm[slot] ?? 0;
+      wRe[at] = (re * aRe + im * aIm) / square;
+      wIm[at] = (im * aRe - re * aIm) / square;
+    }
+    let pair = plan.targetStart[step] ?? 0;
+    for (let one = start; one < end; one++) {
+      const slotOne = neighbourSlot[one] ?? 0;
+      const signOne = (neighbour[one] ?? 0) > vertex ? 1 : -1;
+      const oneRe = wRe[one] ?? 0;
+      const oneIm = wIm[one] ?? 0;
+      const jOneRe = signOne * (jRe[slotOne] ?? 0);
+      const jOneIm = signOne * (jIm[slotOne] ?? 0);
+      for (let other = one + 1; other < end; other++, pair++) {
+        const slot = target[pair] ?? 0;
+        const slotOther = neighbourSlot[other] ?? 0;
+        const signOther = (neighbour[other] ?? 0) > vertex ? 1 : -1;
+        const otherRe = yRe[slotOther] ?? 0;
+        const otherIm = yIm[slotOther] ?? 0;
+        yRe[slot] = (yRe[slot] ?? 0) + (oneRe * otherRe - oneIm * otherIm);
+        yIm[slot] = (yIm[slot] ?? 0) + (oneRe * otherIm + oneIm * otherRe);
+        const jOtherRe = signOther * (jRe[slotOther] ?? 0);
+        const jOtherIm = signOther * (jIm[slotOther] ?? 0);
+        const wOtherRe = wRe[other] ?? 0;
+        const wOtherIm = wIm[other] ?? 0;
+        jRe[slot] = (jRe[slot] ?? 0) + (oneRe * jOtherRe - oneIm * jOtherIm) - (wOtherRe * jOneRe - wOtherIm * jOneIm);
+        jIm[slot] = (jIm[slot] ?? 0) + (oneRe * jOtherIm + oneIm * jOtherRe) - (wOtherRe * jOneIm + wOtherIm * jOneRe);
+      }
+    }
+    return (Math.abs(aRe) + Math.abs(aIm)) / size;
+  }
+
+  /** v_p = v_q + e: what p has towards l, q has towards l, with y·e more of source current. */
+  private joinForward(step: number): void {
+    const { plan, yRe, yIm, jRe, jIm } = this;
+    const vertex = plan.stepVertex[step] ?? 0;
+    const into = plan.stepInto[step] ?? 0;
+    const eRe = this.eRe[step] ?? 0;
+    const eIm = this.eIm[step] ?? 0;
+    let pair = plan.targetStart[step] ?? 0;
+    for (let at = plan.neighbourStart[step] ?? 0; at < (plan.neighbourStart[step + 1] ?? 0); at++, pair++) {
+      const from = plan.neighbourSlot[at] ?? 0;
+      const to = plan.target[pair] ?? 0;
+      const other = plan.neighbour[at] ?? 0;
+      const signFrom = other > vertex ? 1 : -1;
+      const signTo = other > into ? 1 : -1;
+      const re = yRe[from] ?? 0;
+      const im = yIm[from] ?? 0;
+      yRe[to] = (yRe[to] ?? 0) + re;
+      yIm[to] = (yIm[to] ?? 0) + im;
+      jRe[to] = (jRe[to] ?? 0) + signTo * (signFrom * (jRe[from] ?? 0) + (re * eRe - im * eIm));
+      jIm[to] = (jIm[to] ?? 0) + signTo * (signFrom * (jIm[from] ?? 0) + (re * eIm + im * eRe));
+    }
+  }
+
+  private putBack(step: number): void {
+    const { plan, vRe, vIm, dRe, dIm, wRe, wIm } = this;
+    const { neighbour, neighbourSlot, target } = plan;
+    const vertex = plan.stepVertex[step] ?? 0;
+    const start = plan.neighbourStart[step] ?? 0;
+    const end = plan.neighbourStart[step + 1] ?? 0;
+    const uRe = this.uRe[step] ?? 0;
+    const uIm = this.uIm[step] ?? 0;
+    let sumRe = -uRe;
+    let sumIm = -uIm;
+    for (let at = start; at < end; at++) {
+      const other = neighbour[at] ?? 0;
+      const slot = neighbourSlot[at] ?? 0;
+      const xRe = vRe[other] ?? 0;
+      const xIm = vIm[other] ?? 0;
+      const re = wRe[at] ?? 0;
+      const im = wIm[at] ?? 0;
+      sumRe += re * xRe - im * xIm;
+      sumIm += re * xIm + im * xRe;
+      const sign = other > vertex ? 1 : -1;
+      dRe[slot] = -sign * uRe;
+      dIm[slot] = -sign * uIm;
+    }
+    vRe[vertex] = sumRe;
+    vIm[vertex] = sumIm;
+    let pair = plan.targetStart[step] ?? 0;
+    for (let one = start; one < end; one++) {
+      const slotOne = neighbourSlot[one] ?? 0;
+      const signOne = (neighbour[one] ?? 0) > vertex ? 1 : -1;
+      const oneRe = wRe[one] ?? 0;
+      const oneIm = wIm[one] ?? 0;
+      for (let other = one + 1; other < end; other++, pair++) {
+        const slot = target[pair] ?? 0;
+        const slotOther = neighbourSlot[other] ?? 0;
+        const signOther = (neighbour[other] ?? 0) > vertex ? 1 : -1;
+        const otherRe = wRe[other] ?? 0;
+        const otherIm = wIm[other] ?? 0;
+        // The neighbours rise, so the slot's low vertex is the first of the pair.
+        const re = dRe[slot] ?? 0;
+        const im = dIm[slot] ?? 0;
+        dRe[slotOther] = (dRe[slotOther] ?? 0) + signOther * (oneRe * re - oneIm * im);
+        dIm[slotOther] = (dIm[slotOther] ?? 0) + signOther * (oneRe * im + oneIm * re);
+        dRe[slotOne] = (dRe[slotOne] ?? 0) - signOne * (otherRe * re - otherIm * im);
+        dIm[slotOne] = (dIm[slotOne] ?? 0) - signOne * (otherRe * im + otherIm * re);
+      }
+    }
+  }
+
+  private joinBack(step: number): void {
+    const { plan, vRe, vIm, dRe, dIm } = this;
+    const vertex = plan.stepVertex[step] ?? 0;
+    const into = plan.stepInto[step] ?? 0;
+    const eRe = this.eRe[step] ?? 0;
+    const eIm = this.eIm[step] ?? 0;
+    vRe[vertex] = (vRe[into] ?? 0) + eRe;
+    vIm[vertex] = (vIm[into] ?? 0) + eIm;
+    let pair = plan.targetStart[step] ?? 0;
+    for (let at = plan.neighbourStart[step] ?? 0; at < (plan.neighbourStart[step + 1] ?? 0); at++, pair++) {
+      const from = plan.neighbourSlot[at] ?? 0;
+      const to = plan.target[pair] ?? 0;
+      const other = plan.neighbour[at] ?? 0;
+      const signFrom = other > vertex ? 1 : -1;
+      const signTo = other > into ? 1 : -1;
+      dRe[from] = signFrom * (signTo * (dRe[to] ?? 0) + eRe);
+      dIm[from] = signFrom * (signTo * (dIm[to] ?? 0) + eIm);
+    }
+  }
+}
+
+function fourOf(size: number): [Float64Array, Float64Array, Float64Array, Float64Array] {
+  return [new Float64Array(size), new Float64Array(size), new Float64Array(size), new Float64Array(size)];
+}
