@@ -5,14 +5,13 @@ import 'server-only';
  * shell would read as its own is taken out of the plain form, and the full form is percent-encoded (RFC 6266, RFC 8187).
  */
 export function attachmentName(name: string, extension: string): string {
-  const readable = name
-    .toWellFormed()
+  const clean = name
     .normalize('NFC')
     .replace(/[\p{C}\p{Zl}\p{Zp}/\\:*?"<>|]+/gu, ' ')
     .replace(/\s+/g, ' ')
-    .replace(/^[. ]+|[. ]+$/g, '')
-    .slice(0, 80)
-    .toWellFormed();
+    .replace(/^[. ]+|[. ]+$/g, '');
+  // By characters, not code units: half a pair cannot be encoded.
+  const readable = Array.from(clean).slice(0, 80).join('');
   const full = `${readable === '' ? 'sheet' : readable}.${extension}`;
   const plain = full.normalize('NFKD').replace(/[^\x20-\x7e]/g, '').replace(/[%;]/g, '').trim();
   // `plain` may have lost its whole stem to the letters that ASCII lacks.

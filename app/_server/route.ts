@@ -38,7 +38,8 @@ export function route<P extends z.ZodType, Q extends z.ZodType, T>(
   return declare(
     async (request: Request, context: { readonly params: Promise<unknown> }) => {
       const segments = await context.params;
-      const result = await perform({
+      type Input = { readonly params: z.output<P>; readonly query: z.output<Q> };
+      const result = await perform<Input, Viewer, T | Response>({
         name,
         flood: 'read',
         address: clientAddress(request.headers),

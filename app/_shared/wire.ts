@@ -98,6 +98,8 @@ export type SheetOrigin = {
   readonly snapshotName: string | null;
   readonly revision: number;
 };
+/** `more`: there are sheets beyond those that a list shows; a search narrows it. */
+export type SheetList = { readonly sheets: readonly SheetListItem[]; readonly more: boolean };
 export type SheetRecord = {
   readonly id: string;
   readonly name: string;
