@@ -97,7 +97,7 @@ export function floatingProblem(
     const sources = listNames(ids(network, live));
     const cause = agrees
       ? `Current sources ${sources} alone lead to ${where}, so the voltage there is not determined.`
-      : `Current sources ${sources} alone lead to ${where}, and their currents do not add up to zero there.`;
+      : `Current sources ${sources} alone lead to ${where}, and their currents do not add up to zero there, so nothing that they enter can be solved.`;
     const remedy = 'Give the current another path, such as a resistor across one of the sources.';
     return problem('currentCutSet', ids(network, live), nodes, `${cause} ${remedy}`);
   }
@@ -107,7 +107,7 @@ export function floatingProblem(
       'floatingNode',
       ids(network, around),
       nodes,
-      `The current of ${source} has no way on from ${where}. Connect ${nodes.length === 1 ? 'it' : 'them'} to the rest ` +
+      `The current of ${source} has no way on from ${where}, so nothing that it enters can be solved. Connect ${nodes.length === 1 ? 'it' : 'them'} to the rest ` +
         'through an element that conducts at this frequency.',
     );
   }

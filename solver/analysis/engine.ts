@@ -3,12 +3,12 @@ import type { ElementList } from '../elements/element-list';
 import { stampAll } from '../elements/registry';
 import { noReferenceProblem } from './diagnosis';
 import type { Network } from './network';
-import { toNetwork } from './network';
+import { REFERENCE, toNetwork } from './network';
 import { NodalForm } from './nodal-form';
 import type { Problem } from './problem';
 import { Readings } from './readings';
-import { solveComponent } from './solve-component';
-import type { Structure } from './structure';
+import { checkComponent, solveComponent } from './solve-component';
+import type { Component, Structure } from './structure';
 import { analyseStructure, patternOf } from './structure';
 
 interface Prepared {
@@ -26,7 +26,7 @@ export class Engine {
   readonly readings: Readings;
   private readonly prepared = new Map<string, Prepared>();
   private current: Prepared | undefined;
-  private solvedComponents: boolean[] = [];
+  private solved: readonly boolean[] = [];
 
   constructor(list: ElementList) {
     this.network = toNetwork(list);
@@ -41,25 +41,43 @@ export class Engine {
     const { structure, nodal } = this.prepare();
     readings.clear();
     const problems: Problem[] = [...noReference(network, structure)];
-    this.solvedComponents = structure.components.map((component) => {
+    const { components } = structure;
+    const checks = components.map((component) => checkComponent(network, structure, component, branches));
+    const hasNoWayOn = checks.map(({ verdict }) => verdict === 'noWayOn');
+    this.solved = components.map((component) => {
+      const check = checks[component.index];
       const form = nodal[component.index];
-      if (form === undefined) return false;
+      if (check === undefined || form === undefined) return false;
+      problems.push(...check.problems);
+      if (check.verdict !== 'sound' || this.isEnteredBy(component, structure, hasNoWayOn)) return false;
       const outcome = solveComponent(network, structure, component, form, branches, frequency, readings);
       problems.push(...outcome.problems);
       return outcome.solved;
     });
-    this.setGivenCurrents(structure);
-    readings.vKnown[0] = 1;
+    this.setGivenCurrents(structure, hasNoWayOn);
+    readings.vKnown[REFERENCE] = 1;
     return problems;
   }
 
-  /** Whether both ends of a row lie in components that were solved, so that its power is part of the balance. */
-  isSolved(row: number): boolean {
+  /** Whether a node lies in a component that was solved. */
+  isSolved(node: number): boolean {
+    const index = this.current?.structure.componentOf[node] ?? -1;
+    return this.solved[index] === true;
+  }
+
+  /**
+   * Whether a given current without a way on at its other end enters the component. At the reference node that does no
+   * harm: the current law there is not one of the equations.
+   */
+  private isEnteredBy(component: Component, { componentOf }: Structure, hasNoWayOn: readonly boolean[]): boolean {
     const { first, second } = this.network;
-    const componentOf = this.current?.structure.componentOf;
-    const one = componentOf?.[first[row] ?? 0] ?? -1;
-    const other = componentOf?.[second[row] ?? 0] ?? -1;
-    return this.solvedComponents[one] === true && this.solvedComponents[other] === true;
+    return component.outerCurrents.some((row) => {
+      if (this.branches.isGivenZero(row)) return false;
+      const a = first[row] ?? 0;
+      const b = second[row] ?? 0;
+      const [here, there] = componentOf[a] === component.index ? [a, b] : [b, a];
+      return here !== REFERENCE && hasNoWayOn[componentOf[there] ?? -1] === true;
+    });
   }
 
   private prepare(): Prepared {
@@ -75,18 +93,21 @@ export class Engine {
     return prepared;
   }
 
-  /** Given currents are what they are, unless an end of theirs could not be solved; so are their voltages between components. */
-  private setGivenCurrents(structure: Structure): void {
+  /** Given currents are what they are, unless one has no way on at one of its ends; fills in voltages between components. */
+  private setGivenCurrents({ components, componentOf }: Structure, hasNoWayOn: readonly boolean[]): void {
     const { network, branches, readings } = this;
-    for (const component of structure.components) {
+    const { first, second } = network;
+    for (const component of components) {
       for (const row of [...component.innerCurrents, ...component.outerCurrents]) {
+        const ends = [first[row] ?? 0, second[row] ?? 0];
+        const stuck = ends.some((node) => hasNoWayOn[componentOf[node] ?? -1] === true);
         readings.iRe[row] = branches.sRe[row] ?? 0;
         readings.iIm[row] = branches.sIm[row] ?? 0;
-        readings.iKnown[row] = branches.isGivenZero(row) || this.isSolved(row) ? 1 : 0;
+        readings.iKnown[row] = stuck && !branches.isGivenZero(row) ? 0 : 1;
       }
       for (const row of component.outerCurrents) {
-        const a = network.first[row] ?? 0;
-        const b = network.second[row] ?? 0;
+        const a = first[row] ?? 0;
+        const b = second[row] ?? 0;
         readings.dRe[row] = (readings.vRe[a] ?? 0) - (readings.vRe[b] ?? 0);
         readings.dIm[row] = (readings.vIm[a] ?? 0) - (readings.vIm[b] ?? 0);
       }

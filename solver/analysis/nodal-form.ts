@@ -5,6 +5,14 @@ import type { Network } from './network';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
 
+/** Below this, a pivot is what cancellation has left of its terms, and mostly rounding error. */
+const TRUSTED_PIVOT = 1e-10;
+
+/** Above this, the network is so near to having no unique solution that the branch form is to look at it. */
+const TRUSTED_AMPLIFICATION = 1e7;
+
+const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
+
 /**
  * Solves one component in nodal form: given voltages are known or join vertices, the rest goes by star-mesh
  * elimination. The work space is kept for the next frequency of the same structure.
@@ -23,15 +31,15 @@ export class NodalForm {
 
   /**
    * Writes the component's node voltages, its admittances' voltages and currents and its inner given currents'
-   * voltages. Answers the smallest pivot ratio met (see `StarMesh.eliminate`); at 0 nothing is written.
+   * voltages, unless the work cannot be trusted; says whether it can.
    */
-  solve(branches: BranchTable, readings: Readings): number {
+  solve(branches: BranchTable, readings: Readings): boolean {
     const { mesh, component } = this;
-    mesh.clear();
-    this.load(branches);
-    const ratio = mesh.eliminate();
-    if (ratio === 0) return 0;
-    mesh.substitute();
+    this.loadAdmittances(branches);
+    if (mesh.factor() < TRUSTED_PIVOT) return false;
+    if (!(this.amplification(branches) < TRUSTED_AMPLIFICATION)) return false;
+    this.loadSources(branches);
+    mesh.solve();
     for (const node of component.nodes) {
       const vertex = this.structure.vertexOf[node] ?? 0;
       readings.vRe[node] = mesh.vRe[vertex] ?? 0;
@@ -56,24 +64,62 @@ export class NodalForm {
         readings.dIm[row] = (readings.vIm[a] ?? 0) - (readings.vIm[b] ?? 0);
       }
     }
-    return ratio;
+    return true;
   }
 
-  private load(branches: BranchTable): void {
-    const { mesh, component, scratch } = this;
-    const { plan } = component;
+  /**
+   * The largest voltage across any element when every admittance has an electromotive force of one volt in series,
+   * their phases strewn about the circle by the golden angle, and all sources are dead. A relative change of an
+   * element's value acts as such a force of that part of the element's voltage, so this estimates the condition of the
+   * network: near 1 for resistances, the quality factor at a resonance, without bound where no unique solution is.
+   */
+  private amplification(branches: BranchTable): number {
+    const { mesh, component } = this;
+    mesh.clearSources();
+    for (const row of component.admittances) {
+      const slot = component.slotOfRow.get(row) ?? -1;
+      if (slot < 0) continue;
+      const cos = Math.cos(GOLDEN_ANGLE * row);
+      const sin = Math.sin(GOLDEN_ANGLE * row);
+      const re = branches.yRe[row] ?? 0;
+      const im = branches.yIm[row] ?? 0;
+      mesh.jRe[slot] = (mesh.jRe[slot] ?? 0) + re * cos - im * sin;
+      mesh.jIm[slot] = (mesh.jIm[slot] ?? 0) + re * sin + im * cos;
+    }
+    mesh.solve();
+    let largest = 0;
+    for (const row of component.admittances) {
+      const slot = component.slotOfRow.get(row) ?? -1;
+      if (slot < 0) continue;
+      const size = Math.abs(mesh.dRe[slot] ?? 0) + Math.abs(mesh.dIm[slot] ?? 0);
+      if (!(size <= largest)) largest = size;
+    }
+    return largest;
+  }
+
+  private loadAdmittances(branches: BranchTable): void {
+    const { mesh, component } = this;
+    mesh.clearAdmittances();
     for (const row of component.admittances) {
       const slot = component.slotOfRow.get(row) ?? -1;
       if (slot < 0) continue;
       mesh.yRe[slot] = (mesh.yRe[slot] ?? 0) + (branches.yRe[row] ?? 0);
       mesh.yIm[slot] = (mesh.yIm[slot] ?? 0) + (branches.yIm[row] ?? 0);
     }
-    for (const row of component.innerCurrents) {
-      const slot = component.slotOfRow.get(row) ?? -1;
-      if (slot < 0) continue;
-      const sign = this.signOf(row);
-      mesh.jRe[slot] = (mesh.jRe[slot] ?? 0) + sign * (branches.sRe[row] ?? 0);
-      mesh.jIm[slot] = (mesh.jIm[slot] ?? 0) + sign * (branches.sIm[row] ?? 0);
+  }
+
+  private loadSources(branches: BranchTable): void {
+    const { mesh, component, scratch } = this;
+    const { plan } = component;
+    mesh.clearSources();
+    for (const rows of [component.innerCurrents, component.outerCurrents]) {
+      for (const row of rows) {
+        const slot = component.slotOfRow.get(row) ?? -1;
+        if (slot < 0) continue;
+        const sign = this.signOf(row);
+        mesh.jRe[slot] = (mesh.jRe[slot] ?? 0) + sign * (branches.sRe[row] ?? 0);
+        mesh.jIm[slot] = (mesh.jIm[slot] ?? 0) + sign * (branches.sIm[row] ?? 0);
+      }
     }
     for (const slot of plan.knownSlots) {
       this.between(branches, plan.slotLow[slot] ?? 0, plan.slotHigh[slot] ?? 0);
@@ -102,10 +148,13 @@ export class NodalForm {
 
   /** +1 where the row's first node is its slot's low vertex, else −1. */
   private signOf(row: number): 1 | -1 {
-    const { vertexOf } = this.structure;
-    const a = vertexOf[this.network.first[row] ?? 0] ?? 0;
-    const b = vertexOf[this.network.second[row] ?? 0] ?? 0;
-    return a < b ? 1 : -1;
+    return this.vertexAt(this.network.first[row] ?? 0) < this.vertexAt(this.network.second[row] ?? 0) ? 1 : -1;
+  }
+
+  /** The vertex of a node; that of the root for a node outside the component. */
+  private vertexAt(node: number): number {
+    const { vertexOf, componentOf } = this.structure;
+    return componentOf[node] === this.component.index ? (vertexOf[node] ?? 0) : this.component.plan.root;
   }
 
   private readVoltage(row: number, readings: Readings): void {

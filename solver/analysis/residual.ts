@@ -1,7 +1,9 @@
 import type { Engine } from './engine';
+import { REFERENCE } from './network';
 
 /**
- * How well the readings satisfy the equations: the largest of |Σi| / Σ|i| over the nodes, and of
+ * How well the readings satisfy the equations: the largest of |Σi| / Σ|i| over the nodes but the reference (its current
+ * law follows from the others), and of
  * |(v_a − v_b) − v| / max(|v_a|, |v_b|, |v|) over the elements, among what was solved. Between 0 and some units of
  * rounding for a good solution.
  */
@@ -12,16 +14,10 @@ export function residualOf(engine: Engine): number {
   const sumRe = new Float64Array(nodeNames.length);
   const sumIm = new Float64Array(nodeNames.length);
   const size = new Float64Array(nodeNames.length);
-  const isWhole = new Uint8Array(nodeNames.length).fill(1);
   let worst = 0;
   for (let row = 0; row < elements.length; row++) {
     const a = first[row] ?? 0;
     const b = second[row] ?? 0;
-    if (!engine.isSolved(row)) {
-      isWhole[a] = 0;
-      isWhole[b] = 0;
-      continue;
-    }
     const re = iRe[row] ?? 0;
     const im = iIm[row] ?? 0;
     sumRe[a] = (sumRe[a] ?? 0) + re;
@@ -31,6 +27,7 @@ export function residualOf(engine: Engine): number {
     const current = Math.hypot(re, im);
     size[a] = (size[a] ?? 0) + current;
     size[b] = (size[b] ?? 0) + current;
+    if (!engine.isSolved(a) || !engine.isSolved(b)) continue;
     const offRe = (vRe[a] ?? 0) - (vRe[b] ?? 0) - (dRe[row] ?? 0);
     const offIm = (vIm[a] ?? 0) - (vIm[b] ?? 0) - (dIm[row] ?? 0);
     const largest = Math.max(
@@ -42,7 +39,8 @@ export function residualOf(engine: Engine): number {
   }
   for (let node = 0; node < nodeNames.length; node++) {
     const total = size[node] ?? 0;
-    if (isWhole[node] === 1 && total > 0) worst = Math.max(worst, Math.hypot(sumRe[node] ?? 0, sumIm[node] ?? 0) / total);
+    if (total === 0 || node === REFERENCE || !engine.isSolved(node)) continue;
+    worst = Math.max(worst, Math.hypot(sumRe[node] ?? 0, sumIm[node] ?? 0) / total);
   }
   return worst;
 }

@@ -8,23 +8,55 @@ import type { Problem } from './problem';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
 
-/** What a component came to: whether its readings stand, and what is to be said of it. */
+/** Values between these keep every product and quotient of the elimination within the range of the arithmetic. */
+const SMALLEST = 1e-140;
+const LARGEST = 1e140;
+
+/** What can be said of a component before anything is computed. */
+export interface ComponentCheck {
+  /**
+   * - `sound`: it can be solved, though not all of it need be determined.
+   * - `unsolvable`: its given voltages contradict each other, or its values are out of range.
+   * - `noWayOn`: the given currents into it contradict Kirchhoff's law, so where else they go cannot be solved either.
+   */
+  readonly verdict: 'sound' | 'unsolvable' | 'noWayOn';
+  readonly problems: readonly Problem[];
+}
+
+/** Looks for given voltages in loops, for given currents without a way on, and for values out of range. */
+export function checkComponent(
+  network: Network,
+  structure: Structure,
+  component: Component,
+  branches: BranchTable,
+): ComponentCheck {
+  const outOfRange = rowsOutOfRange(component, branches);
+  if (outOfRange.length > 0) {
+    return { verdict: 'unsolvable', problems: [rangeProblem(network, component, outOfRange)] };
+  }
+  const problems: Problem[] = [];
+  let verdict: ComponentCheck['verdict'] = 'sound';
+  for (const loop of component.loops) {
+    const agrees = loopAgrees(network, structure, branches, loop);
+    if (!agrees) verdict = 'unsolvable';
+    problems.push(voltageLoopProblem(network, loop, agrees));
+  }
+  if (component.grounded) return { verdict, problems };
+  const agrees = netCurrentIsZero(network, structure, component, branches);
+  if (!agrees) verdict = 'noWayOn';
+  const live = component.outerCurrents.some((row) => !branches.isGivenZero(row));
+  const inReferenceIsland = structure.islandOf[component.nodes[0] ?? 0] === structure.referenceIsland;
+  if (live || inReferenceIsland) problems.push(floatingProblem(network, branches, component, agrees));
+  return { verdict, problems };
+}
+
+/** What a sound component came to: whether its readings stand, and what more is to be said of it. */
 export interface ComponentOutcome {
   readonly solved: boolean;
   readonly problems: readonly Problem[];
 }
 
-/** Values between these keep every product and quotient of the elimination within the range of the arithmetic. */
-const SMALLEST = 1e-140;
-const LARGEST = 1e140;
-
-/**
- * Below this, cancellation in a pivot has cost so many digits that the branch form, which does not divide by it, is
- * called in.
- */
-const TRUSTED_PIVOT = 1e-7;
-
-/** Solves one component at one frequency and marks in the readings what is determined. */
+/** Solves one sound component at one frequency and marks in the readings what is determined. */
 export function solveComponent(
   network: Network,
   structure: Structure,
@@ -35,31 +67,10 @@ export function solveComponent(
   readings: Readings,
 ): ComponentOutcome {
   const problems: Problem[] = [];
-  const outOfRange = rowsOutOfRange(component, branches);
-  if (outOfRange.length > 0) return { solved: false, problems: [rangeProblem(network, component, outOfRange)] };
-
-  let contradiction = false;
-  for (const loop of component.loops) {
-    const agrees = loopAgrees(network, structure, branches, loop);
-    if (!agrees) contradiction = true;
-    problems.push(voltageLoopProblem(network, loop, agrees));
-  }
-  if (!component.grounded) {
-    const agrees = netCurrentIsZero(network, structure, component, branches);
-    const live = component.outerCurrents.some((row) => !branches.isGivenZero(row));
-    const inReferenceIsland = structure.islandOf[component.nodes[0] ?? 0] === structure.referenceIsland;
-    if (!agrees) contradiction = true;
-    if (live || inReferenceIsland) problems.push(floatingProblem(network, branches, component, agrees));
-  }
-  if (contradiction) return { solved: false, problems };
-
-  const ratio = nodal.solve(branches, readings);
   const unknown = { nodes: new Set<number>(), currents: new Set<number>(), voltages: new Set<number>() };
-  if (ratio < TRUSTED_PIVOT) {
+  if (!nodal.solve(branches, readings)) {
     const outcome = solveInBranchForm(network, component, branches, readings);
-    if (outcome === 'tooLarge') {
-      return { solved: false, problems: [...problems, tooLargeProblem(network, component, frequency)] };
-    }
+    if (outcome === 'tooLarge') return { solved: false, problems: [tooLargeProblem(network, component, frequency)] };
     if (outcome !== 'solved') {
       problems.push(singularProblem(network, branches, component, outcome, frequency));
       if (!outcome.consistent) return { solved: false, problems };
@@ -68,20 +79,15 @@ export function solveComponent(
       for (const row of outcome.voltages) unknown.voltages.add(row);
     }
   }
-
   setGivenVoltages(network, structure, component, branches, readings);
-  if (!isFinite(component, readings)) {
-    return { solved: false, problems: [...problems, rangeProblem(network, component, [])] };
-  }
+  if (!isFinite(component, readings)) return { solved: false, problems: [rangeProblem(network, component, [])] };
+
   for (const node of component.nodes) readings.vKnown[node] = component.grounded && !unknown.nodes.has(node) ? 1 : 0;
   for (const row of component.admittances) {
     readings.iKnown[row] = unknown.currents.has(row) ? 0 : 1;
     readings.dKnown[row] = unknown.voltages.has(row) ? 0 : 1;
   }
-  for (const row of component.innerCurrents) {
-    readings.iKnown[row] = 1;
-    readings.dKnown[row] = unknown.voltages.has(row) ? 0 : 1;
-  }
+  for (const row of component.innerCurrents) readings.dKnown[row] = unknown.voltages.has(row) ? 0 : 1;
   for (const row of component.treeVoltages) {
     readings.iKnown[row] = structure.onLoop[row] === 1 || unknown.currents.has(row) ? 0 : 1;
     readings.dKnown[row] = 1;

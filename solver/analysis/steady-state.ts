@@ -1,4 +1,5 @@
 import { Complex } from 'complex.js';
+import { ADMITTANCE } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
 import { validateElementList } from '../elements/validate-element-list';
 import { Engine } from './engine';
@@ -55,6 +56,8 @@ function toSolution(engine: Engine, frequency: number, problems: readonly Proble
   const { network, branches, readings } = engine;
   const { nodeIndex, elementIndex } = network;
 
+  const isSolved = (row: number): boolean =>
+    engine.isSolved(network.first[row] ?? 0) && engine.isSolved(network.second[row] ?? 0);
   const voltage = (node: string): Complex | undefined => {
     const at = nodeIndex.get(node);
     return at === undefined || readings.vKnown[at] !== 1 ? undefined : complex(readings.vRe[at], readings.vIm[at]);
@@ -72,8 +75,7 @@ function toSolution(engine: Engine, frequency: number, problems: readonly Proble
     if (at === undefined) return undefined;
     if (readings.dKnown[at] === 1 && readings.iKnown[at] === 1) return powerOf(engine, at);
     // Nothing times something finite: an open circuit's voltage, or an ideal connection's current, need not be known.
-    const nothing = branches.form[at] !== 0 && branches.isGivenZero(at) && engine.isSolved(at);
-    return nothing ? complex(0, 0) : undefined;
+    return branches.form[at] !== ADMITTANCE && branches.isGivenZero(at) && isSolved(at) ? complex(0, 0) : undefined;
   };
   return {
     ok: true,
@@ -101,16 +103,30 @@ function powerOf({ readings }: Engine, row: number): Complex {
   return complex(dRe * iRe + dIm * iIm, dIm * iRe - dRe * iIm);
 }
 
+/**
+ * Tellegen's sum over what was solved. A given current between two components counts at each end by that end's voltage,
+ * so a component that was solved balances also where its neighbour was not.
+ */
 function balanceOf(engine: Engine): PowerBalance {
+  const { network, readings } = engine;
   let re = 0;
   let im = 0;
   let scale = 0;
-  for (let row = 0; row < engine.network.elements.length; row++) {
-    if (!engine.isSolved(row)) continue;
-    const power = powerOf(engine, row);
-    re += power.re;
-    im += power.im;
-    scale += Math.hypot(power.re, power.im);
+  const add = (vRe: number, vIm: number, iRe: number, iIm: number): void => {
+    const p = vRe * iRe + vIm * iIm;
+    const q = vIm * iRe - vRe * iIm;
+    re += p;
+    im += q;
+    scale += Math.hypot(p, q);
+  };
+  for (let row = 0; row < network.elements.length; row++) {
+    const a = network.first[row] ?? 0;
+    const b = network.second[row] ?? 0;
+    const iRe = readings.iRe[row] ?? 0;
+    const iIm = readings.iIm[row] ?? 0;
+    if (engine.isSolved(a) && engine.isSolved(b)) add(readings.dRe[row] ?? 0, readings.dIm[row] ?? 0, iRe, iIm);
+    else if (engine.isSolved(a)) add(readings.vRe[a] ?? 0, readings.vIm[a] ?? 0, iRe, iIm);
+    else if (engine.isSolved(b)) add(readings.vRe[b] ?? 0, readings.vIm[b] ?? 0, -iRe, -iIm);
   }
   return { sum: complex(re, im), scale };
 }

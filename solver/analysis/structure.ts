@@ -27,7 +27,11 @@ export interface Component {
   readonly outerCurrents: readonly number[];
   /** How its nodal equations are solved. */
   readonly plan: EliminationPlan;
-  /** For each admittance and inner current: its slot, or −1 where its ends are one vertex; see `vertexOf`. */
+  /**
+   * For each admittance and each given current but those of zero: its slot, or −1 where its ends are one vertex (see
+   * `vertexOf`). A given current that leaves the component is taken to come back at the root: the root's current law
+   * is not among the equations, and in a component without a reference what leaves it adds up to zero.
+   */
   readonly slotOfRow: ReadonlyMap<number, number>;
 }
 
@@ -108,13 +112,13 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
   const rows = sortRows(network, branches, componentOf, forest, nodesOf.length);
   const components = nodesOf.map((nodes, index): Component => {
     const mine = rows[index] ?? emptyRows();
-    const inSlots = [...mine.admittances, ...mine.innerCurrents.filter((row) => !branches.isGivenZero(row))];
+    const currents = [...mine.innerCurrents, ...mine.outerCurrents].filter((row) => !branches.isGivenZero(row));
+    const inSlots = [...mine.admittances, ...currents];
+    const root = nodes[0] ?? 0;
     const pairs: [number, number][] = [];
     const pairOfRow = new Map<number, number>();
     for (const row of inSlots) {
-      const [a, b] = ends(row);
-      const one = vertexOf[a] ?? 0;
-      const other = vertexOf[b] ?? 0;
+      const [one, other] = ends(row).map((node) => vertexOf[componentOf[node] === index ? node : root] ?? 0) as [number, number];
       if (one === other) continue;
       pairOfRow.set(row, pairs.length);
       pairs.push(one < other ? [one, other] : [other, one]);
@@ -123,7 +127,7 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
     const plan = planElimination({
       vertexCount: representatives.length,
       group: Int32Array.from(representatives, (node) => grouped.find(node)),
-      root: vertexOf[nodes[0] ?? 0] ?? 0,
+      root: vertexOf[root] ?? 0,
       pairs,
     });
     const slotOfRow = new Map(inSlots.map((row) => [row, slotOfPairRow(plan, pairOfRow.get(row))]));

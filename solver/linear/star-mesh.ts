@@ -25,7 +25,7 @@ export class StarMesh {
   /** Admittance of each slot, S. Filled in by the caller, then worked upon. */
   readonly yRe: Float64Array;
   readonly yIm: Float64Array;
-  /** Source current of each slot from its low to its high vertex, A. Filled in by the caller, then worked upon. */
+  /** Source current of each slot from its low to its high vertex, A. Filled in by the caller before each `solve`. */
   readonly jRe: Float64Array;
   readonly jIm: Float64Array;
   /** Voltage of each slot's low vertex over its high one, V. The caller fills in the plan's known slots. */
@@ -39,6 +39,8 @@ export class StarMesh {
   readonly eIm: Float64Array;
   private readonly wRe: Float64Array;
   private readonly wIm: Float64Array;
+  private readonly inverseRe: Float64Array;
+  private readonly inverseIm: Float64Array;
   private readonly uRe: Float64Array;
   private readonly uIm: Float64Array;
 
@@ -51,19 +53,27 @@ export class StarMesh {
     [this.vRe, this.vIm] = fourOf(plan.vertexCount);
     [this.eRe, this.eIm, this.uRe, this.uIm] = fourOf(steps);
     [this.wRe, this.wIm] = fourOf(neighbours);
+    [this.inverseRe, this.inverseIm] = fourOf(steps);
   }
 
-  /** Sets admittances, sources and voltages to zero for the next frequency. */
-  clear(): void {
-    for (const array of [this.yRe, this.yIm, this.jRe, this.jIm]) array.fill(0);
+  /** Sets admittances to zero for the next frequency. */
+  clearAdmittances(): void {
+    this.yRe.fill(0);
+    this.yIm.fill(0);
+  }
+
+  /** Sets sources and known voltages to zero for the next right-hand side. */
+  clearSources(): void {
+    const { jRe, jIm, dRe, dIm, vRe, vIm, eRe, eIm } = this;
+    for (const array of [jRe, jIm, dRe, dIm, vRe, vIm, eRe, eIm]) array.fill(0);
   }
 
   /**
-   * Takes all vertices out. Answers the smallest size of a pivot against the sum of the sizes of its terms: near 0,
-   * what is left of it after cancellation is rounding error, and the solution is not to be trusted; 0 at once when a
-   * pivot is zero or not finite.
+   * Takes all vertices out of the admittances. Answers the smallest size of a pivot against the sum of the sizes of
+   * its terms: near 0, what is left of it after cancellation is rounding error; 0 at once when a pivot is zero or not
+   * finite, and then nothing may be solved.
    */
-  eliminate(): number {
+  factor(): number {
     const { plan } = this;
     let smallest = 1;
     for (let step = 0; step < plan.stepVertex.length; step++) {
@@ -72,15 +82,19 @@ export class StarMesh {
         if (!(ratio > 0)) return 0;
         if (ratio < smallest) smallest = ratio;
       } else {
-        this.joinForward(step);
+        this.joinAdmittances(step);
       }
     }
     return smallest;
   }
 
-  /** Finds all voltages, last vertex taken out first. */
-  substitute(): void {
+  /** Finds all voltages for the sources and known voltages that stand there; the admittances' factors are kept. */
+  solve(): void {
     const { plan } = this;
+    for (let step = 0; step < plan.stepVertex.length; step++) {
+      if ((plan.stepInto[step] ?? -1) < 0) this.carrySources(step);
+      else this.joinSources(step);
+    }
     for (let step = plan.stepVertex.length - 1; step >= 0; step--) {
       if ((plan.stepInto[step] ?? -1) < 0) this.putBack(step);
       else this.joinBack(step);
@@ -88,16 +102,13 @@ export class StarMesh {
   }
 
   private takeOut(step: number): number {
-    const { plan, yRe, yIm, jRe, jIm, wRe, wIm } = this;
-    const { neighbour, neighbourSlot, target } = plan;
-    const vertex = plan.stepVertex[step] ?? 0;
+    const { plan, yRe, yIm, wRe, wIm } = this;
+    const { neighbourSlot, target } = plan;
     const start = plan.neighbourStart[step] ?? 0;
     const end = plan.neighbourStart[step + 1] ?? 0;
     let aRe = 0;
     let aIm = 0;
     let size = 0;
-    let sumRe = 0;
-    let sumIm = 0;
     for (let at = start; at < end; at++) {
       const slot = neighbourSlot[at] ?? 0;
       const re = yRe[slot] ?? 0;
@@ -105,16 +116,11 @@ export class StarMesh {
       aRe += re;
       aIm += im;
       size += Math.abs(re) + Math.abs(im);
-      const sign = (neighbour[at] ?? 0) > vertex ? 1 : -1;
-      sumRe += sign * (jRe[slot] ?? 0);
-      sumIm += sign * (jIm[slot] ?? 0);
     }
     const square = aRe * aRe + aIm * aIm;
     if (!(square > 0) || square === Infinity) return 0;
-    const inverseRe = aRe / square;
-    const inverseIm = -aIm / square;
-    this.uRe[step] = sumRe * inverseRe - sumIm * inverseIm;
-    this.uIm[step] = sumRe * inverseIm + sumIm * inverseRe;
+    this.inverseRe[step] = aRe / square;
+    this.inverseIm[step] = -aIm / square;
     for (let at = start; at < end; at++) {
       const slot = neighbourSlot[at] ?? 0;
       const re = yRe[slot] ?? 0;
@@ -122,6 +128,52 @@ export class StarMesh {
       wRe[at] = (re * aRe + im * aIm) / square;
       wIm[at] = (im * aRe - re * aIm) / square;
     }
+    let pair = plan.targetStart[step] ?? 0;
+    for (let one = start; one < end; one++) {
+      const oneRe = wRe[one] ?? 0;
+      const oneIm = wIm[one] ?? 0;
+      for (let other = one + 1; other < end; other++, pair++) {
+        const slot = target[pair] ?? 0;
+        const slotOther = neighbourSlot[other] ?? 0;
+        const otherRe = yRe[slotOther] ?? 0;
+        const otherIm = yIm[slotOther] ?? 0;
+        yRe[slot] = (yRe[slot] ?? 0) + (oneRe * otherRe - oneIm * otherIm);
+        yIm[slot] = (yIm[slot] ?? 0) + (oneRe * otherIm + oneIm * otherRe);
+      }
+    }
+    return (Math.abs(aRe) + Math.abs(aIm)) / size;
+  }
+
+  /** What p has towards l, q has towards l. */
+  private joinAdmittances(step: number): void {
+    const { plan, yRe, yIm } = this;
+    let pair = plan.targetStart[step] ?? 0;
+    for (let at = plan.neighbourStart[step] ?? 0; at < (plan.neighbourStart[step + 1] ?? 0); at++, pair++) {
+      const from = plan.neighbourSlot[at] ?? 0;
+      const to = plan.target[pair] ?? 0;
+      yRe[to] = (yRe[to] ?? 0) + (yRe[from] ?? 0);
+      yIm[to] = (yIm[to] ?? 0) + (yIm[from] ?? 0);
+    }
+  }
+
+  private carrySources(step: number): void {
+    const { plan, jRe, jIm, wRe, wIm } = this;
+    const { neighbour, neighbourSlot, target } = plan;
+    const vertex = plan.stepVertex[step] ?? 0;
+    const start = plan.neighbourStart[step] ?? 0;
+    const end = plan.neighbourStart[step + 1] ?? 0;
+    let sumRe = 0;
+    let sumIm = 0;
+    for (let at = start; at < end; at++) {
+      const slot = neighbourSlot[at] ?? 0;
+      const sign = (neighbour[at] ?? 0) > vertex ? 1 : -1;
+      sumRe += sign * (jRe[slot] ?? 0);
+      sumIm += sign * (jIm[slot] ?? 0);
+    }
+    const inverseRe = this.inverseRe[step] ?? 0;
+    const inverseIm = this.inverseIm[step] ?? 0;
+    this.uRe[step] = sumRe * inverseRe - sumIm * inverseIm;
+    this.uIm[step] = sumRe * inverseIm + sumIm * inverseRe;
     let pair = plan.targetStart[step] ?? 0;
     for (let one = start; one < end; one++) {
       const slotOne = neighbourSlot[one] ?? 0;
@@ -134,23 +186,18 @@ export class StarMesh {
         const slot = target[pair] ?? 0;
         const slotOther = neighbourSlot[other] ?? 0;
         const signOther = (neighbour[other] ?? 0) > vertex ? 1 : -1;
-        const otherRe = yRe[slotOther] ?? 0;
-        const otherIm = yIm[slotOther] ?? 0;
-        yRe[slot] = (yRe[slot] ?? 0) + (oneRe * otherRe - oneIm * otherIm);
-        yIm[slot] = (yIm[slot] ?? 0) + (oneRe * otherIm + oneIm * otherRe);
-        const jOtherRe = signOther * (jRe[slotOther] ?? 0);
-        const jOtherIm = signOther * (jIm[slotOther] ?? 0);
-        const wOtherRe = wRe[other] ?? 0;
-        const wOtherIm = wIm[other] ?? 0;
-        jRe[slot] = (jRe[slot] ?? 0) + (oneRe * jOtherRe - oneIm * jOtherIm) - (wOtherRe * jOneRe - wOtherIm * jOneIm);
-        jIm[slot] = (jIm[slot] ?? 0) + (oneRe * jOtherIm + oneIm * jOtherRe) - (wOtherRe * jOneIm + wOtherIm * jOneRe);
+        const jRe2 = signOther * (jRe[slotOther] ?? 0);
+        const jIm2 = signOther * (jIm[slotOther] ?? 0);
+        const wRe2 = wRe[other] ?? 0;
+        const wIm2 = wIm[other] ?? 0;
+        jRe[slot] = (jRe[slot] ?? 0) + (oneRe * jRe2 - oneIm * jIm2) - (wRe2 * jOneRe - wIm2 * jOneIm);
+        jIm[slot] = (jIm[slot] ?? 0) + (oneRe * jIm2 + oneIm * jRe2) - (wRe2 * jOneIm + wIm2 * jOneRe);
       }
     }
-    return (Math.abs(aRe) + Math.abs(aIm)) / size;
   }
 
-  /** v_p = v_q + e: what p has towards l, q has towards l, with y·e more of source current. */
-  private joinForward(step: number): void {
+  /** v_p = v_q + e: the source current that p has towards l, q has towards l, with y·e more. */
+  private joinSources(step: number): void {
     const { plan, yRe, yIm, jRe, jIm } = this;
     const vertex = plan.stepVertex[step] ?? 0;
     const into = plan.stepInto[step] ?? 0;
@@ -165,8 +212,6 @@ export class StarMesh {
       const signTo = other > into ? 1 : -1;
       const re = yRe[from] ?? 0;
       const im = yIm[from] ?? 0;
-      yRe[to] = (yRe[to] ?? 0) + re;
-      yIm[to] = (yIm[to] ?? 0) + im;
       jRe[to] = (jRe[to] ?? 0) + signTo * (signFrom * (jRe[from] ?? 0) + (re * eRe - im * eIm));
       jIm[to] = (jIm[to] ?? 0) + signTo * (signFrom * (jIm[from] ?? 0) + (re * eIm + im * eRe));
     }
