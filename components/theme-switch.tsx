@@ -1,16 +1,18 @@
 'use client';
 
 import { Monitor, Moon, Sun } from 'lucide-react';
-import { useState } from 'react';
+import { useId } from 'react';
 import { classNames } from './class-names';
-import { applyTheme, THEMES, type Theme } from './theme';
+import { applyTheme, THEME_LABELS, THEMES, type Theme } from './theme';
+import { useTheme } from './use-theme';
 
 const ICONS = { day: Sun, night: Moon, system: Monitor } as const;
-const LABELS: Readonly<Record<Theme, string>> = { day: 'Daylight', night: 'Night', system: 'As the system' };
 
 /** Daylight, night, or as the system has it; acts at once and is remembered in the `theme` cookie. */
 export function ThemeSwitch({ theme, showLabels = false }: { readonly theme: Theme; readonly showLabels?: boolean }) {
-  const [chosen, setChosen] = useState(theme);
+  const chosen = useTheme(theme);
+  // Two on one page must not be one group: the browser would untick the other.
+  const group = useId();
   return (
     <div
       role="radiogroup"
@@ -23,7 +25,7 @@ export function ThemeSwitch({ theme, showLabels = false }: { readonly theme: The
         return (
           <label
             key={one}
-            title={LABELS[one]}
+            title={THEME_LABELS[one]}
             className={classNames(
               'flex h-6 min-w-7 cursor-pointer items-center justify-center gap-1.5 rounded-[5px] text-[13px] has-focus-visible:outline-2 has-focus-visible:outline-offset-1 has-focus-visible:outline-voltage',
               showLabels && 'px-2.5',
@@ -32,17 +34,14 @@ export function ThemeSwitch({ theme, showLabels = false }: { readonly theme: The
           >
             <input
               type="radio"
-              name="theme"
+              name={group}
               value={one}
               checked={isChosen}
-              onChange={() => {
-                setChosen(one);
-                applyTheme(one);
-              }}
+              onChange={() => applyTheme(one)}
               className="sr-only"
             />
             <Icon size={15} strokeWidth={1.75} aria-hidden="true" />
-            <span className={showLabels ? undefined : 'sr-only'}>{LABELS[one]}</span>
+            <span className={showLabels ? undefined : 'sr-only'}>{THEME_LABELS[one]}</span>
           </label>
         );
       })}
