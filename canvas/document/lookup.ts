@@ -4,7 +4,7 @@ import type { Point } from '../geometry/point';
 import { routeWire, type RouteEnd } from '../geometry/route';
 import type { PinDefinition } from '../parts/definition';
 import { definitionOf } from '../parts/registry';
-import type { Part, PartId, PinRef, SheetDocument, Wire } from './types';
+import type { Part, PartId, PinRef, SheetDocument, Wire, WireId } from './types';
 
 /** A pin as it lies on the sheet. */
 export type PlacedPin = { readonly ref: PinRef; readonly label: string; readonly at: Point; readonly outward: Direction };
@@ -84,11 +84,40 @@ export function routeEndAt(document: Pick<SheetDocument, 'parts'>, ref: PinRef):
   return part ? routeEnd(part, ref.pin) : null;
 }
 
+type Routed = { readonly from: Part; readonly to: Part; readonly course: readonly Point[] };
+
+/** A wire's course depends on itself and its two parts alone, so it is kept for as long as these three are the same. */
+const routed = new WeakMap<Wire, Routed>();
+
 /** The course of a wire on the sheet; empty when an end is missing. */
 export function courseOf(document: Pick<SheetDocument, 'parts'>, wire: Wire): readonly Point[] {
-  const from = routeEndAt(document, wire.from);
-  const to = routeEndAt(document, wire.to);
-  return from && to ? routeWire(from, to, wire.corners) : [];
+  const parts = partsById(document);
+  const from = parts.get(wire.from.part);
+  const to = parts.get(wire.to.part);
+  if (!from || !to) return [];
+  const known = routed.get(wire);
+  if (known && known.from === from && known.to === to) return known.course;
+  const start = routeEnd(from, wire.from.pin);
+  const end = routeEnd(to, wire.to.pin);
+  const course = start && end ? routeWire(start, end, wire.corners) : [];
+  routed.set(wire, { from, to, course });
+  return course;
+}
+
+/** The course of every wire. */
+export function coursesOf(document: Pick<SheetDocument, 'parts' | 'wires'>): ReadonlyMap<WireId, readonly Point[]> {
+  return new Map(document.wires.map((wire) => [wire.id, courseOf(document, wire)]));
+}
+
+const placedPins = new WeakMap<readonly Part[], readonly PlacedPin[]>();
+
+/** Every pin on the sheet, in drawing order. */
+export function allPins(document: Pick<SheetDocument, 'parts'>): readonly PlacedPin[] {
+  const known = placedPins.get(document.parts);
+  if (known) return known;
+  const made = document.parts.flatMap(pinsOf);
+  placedPins.set(document.parts, made);
+  return made;
 }
 
 export function designatorsOf(document: Pick<SheetDocument, 'parts'>): Set<string> {
