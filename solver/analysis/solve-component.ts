@@ -1,6 +1,7 @@
 import type { BranchTable } from '../elements/branch-table';
 import { solveInBranchForm } from './branch-form';
 import { floatingProblem, rangeProblem, singularProblem, tooLargeProblem, voltageLoopProblem } from './diagnosis';
+import { readGivenVoltages } from './given-voltage-currents';
 import { currentsAgree, loopAgrees } from './given-voltages';
 import type { Network } from './network';
 import type { NodalForm } from './nodal-form';
@@ -79,7 +80,7 @@ export function solveComponent(
       for (const row of outcome.voltages) unknown.voltages.add(row);
     }
   }
-  setGivenVoltages(network, structure, component, branches, readings);
+  readGivenVoltages(network, structure, component, branches, readings);
   if (!isFinite(component, readings)) return { solved: false, problems: [rangeProblem(network, component, [])] };
 
   for (const node of component.nodes) readings.vKnown[node] = component.grounded && !unknown.nodes.has(node) ? 1 : 0;
@@ -131,54 +132,6 @@ function netCurrentIsZero(
     size += Math.hypot(branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
   }
   return currentsAgree(net, size);
-}
-
-/**
- * The voltages of given-voltage rows as given, and their currents by Kirchhoff's current law from the leaves of their
- * forest to its root. A row that closes a loop gets no current, which is one of the many that are possible.
- */
-function setGivenVoltages(
-  { first, second }: Network,
-  structure: Structure,
-  component: Component,
-  branches: BranchTable,
-  readings: Readings,
-): void {
-  const leavingRe = new Map<number, number>();
-  const leavingIm = new Map<number, number>();
-  const leave = (node: number, re: number, im: number): void => {
-    leavingRe.set(node, (leavingRe.get(node) ?? 0) + re);
-    leavingIm.set(node, (leavingIm.get(node) ?? 0) + im);
-  };
-  for (const row of component.admittances) {
-    leave(first[row] ?? 0, readings.iRe[row] ?? 0, readings.iIm[row] ?? 0);
-    leave(second[row] ?? 0, -(readings.iRe[row] ?? 0), -(readings.iIm[row] ?? 0));
-  }
-  for (const row of [...component.innerCurrents, ...component.outerCurrents]) {
-    leave(first[row] ?? 0, branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
-    leave(second[row] ?? 0, -(branches.sRe[row] ?? 0), -(branches.sIm[row] ?? 0));
-  }
-  for (let at = component.treeVoltages.length - 1; at >= 0; at--) {
-    const row = component.treeVoltages[at] ?? 0;
-    const a = first[row] ?? 0;
-    const child = structure.parentRow[a] === row ? a : (second[row] ?? 0);
-    const parent = structure.parent[child] ?? 0;
-    const re = leavingRe.get(child) ?? 0;
-    const im = leavingIm.get(child) ?? 0;
-    const sign = child === a ? -1 : 1;
-    readings.iRe[row] = sign * re;
-    readings.iIm[row] = sign * im;
-    leave(parent, re, im);
-  }
-  const loopRows = component.loops.map(({ closing }) => closing);
-  for (const row of loopRows) {
-    readings.iRe[row] = 0;
-    readings.iIm[row] = 0;
-  }
-  for (const row of [...component.treeVoltages, ...loopRows]) {
-    readings.dRe[row] = branches.sRe[row] ?? 0;
-    readings.dIm[row] = branches.sIm[row] ?? 0;
-  }
 }
 
 function isFinite(component: Component, readings: Readings): boolean {

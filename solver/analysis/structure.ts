@@ -40,7 +40,10 @@ export interface VoltageLoop {
   readonly path: readonly number[];
 }
 
-/** The graph of a network for one pattern of forms; it holds at every frequency with that pattern. */
+/**
+ * The graph of a network for one pattern of forms; it holds at every frequency with that pattern. Only the choice of
+ * each group's last vertex looks at values, those of the frequency it was made at.
+ */
 export interface Structure {
   readonly components: readonly Component[];
   readonly componentOf: Int32Array;
@@ -124,10 +127,16 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
       pairs.push(one < other ? [one, other] : [other, one]);
     }
     const representatives = nodeOfVertex[index] ?? new Int32Array(0);
+    const weight = new Float64Array(representatives.length);
+    for (const row of mine.admittances) {
+      const size = Math.hypot(branches.yRe[row] ?? 0, branches.yIm[row] ?? 0);
+      for (const node of ends(row)) weight[vertexOf[node] ?? 0] = (weight[vertexOf[node] ?? 0] ?? 0) + size;
+    }
     const plan = planElimination({
       vertexCount: representatives.length,
       group: Int32Array.from(representatives, (node) => grouped.find(node)),
       root: vertexOf[root] ?? 0,
+      weight,
       pairs,
     });
     const slotOfRow = new Map(inSlots.map((row) => [row, slotOfPairRow(plan, pairOfRow.get(row))]));

@@ -10,6 +10,8 @@ export interface PlanGraph {
   /** For each vertex a number that is the same within a group; a vertex of its own has a group to itself. */
   readonly group: Int32Array;
   readonly root: number;
+  /** How strongly each vertex is tied to others, in any measure: of a group, the strongest keeps its place longest. */
+  readonly weight: Float64Array;
   /** Pairs of different vertices that are connected, as [low, high]; repeats are allowed. */
   readonly pairs: readonly (readonly [number, number])[];
 }
@@ -69,10 +71,12 @@ class Slots {
  * Minimum-degree order by the graph alone (Markowitz 1957 in its symmetric form; Tinney and Walker 1967,
  * doi 10.1109/PROC.1967.6011), of equal degrees the lowest number. Vertices of their own go first; groups are then
  * joined to one vertex each, as late as possible, because a difference of two large known voltages loses nothing while
- * their vertices are still apart; then these go by degree too. All that is left is the root's group.
+ * their vertices are still apart, and to the one most strongly tied, because the small voltage across a strong tie
+ * would otherwise come out as a difference of large ones; then these go by degree too. All that is left is the root's
+ * group.
  */
 export function planElimination(graph: PlanGraph): EliminationPlan {
-  const { vertexCount, group, root, pairs } = graph;
+  const { vertexCount, group, root, weight, pairs } = graph;
   const slots = new Slots(vertexCount);
   const slotOfPair = Int32Array.from(pairs, ([one, other]) => slots.get(one, other));
   const rootGroup = group[root] ?? -1;
@@ -140,7 +144,7 @@ export function planElimination(graph: PlanGraph): EliminationPlan {
     const of = group[vertex] ?? vertex;
     if (of === rootGroup) continue;
     if (groupSize.get(of) === 1) single.add(vertex);
-    else if (!representative.has(of)) representative.set(of, vertex);
+    else if ((weight[vertex] ?? 0) > (weight[representative.get(of) ?? -1] ?? -1)) representative.set(of, vertex);
   }
   byDegree(single);
   for (let vertex = 0; vertex < vertexCount; vertex++) {
