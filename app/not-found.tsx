@@ -1,0 +1,24 @@
+import type { Metadata } from 'next';
+import Link from 'next/link';
+import { BrokenWire } from './_frame/broken-wire';
+import { MessagePage } from './_frame/message-page';
+import { buttonStyle } from '@/components/button-style';
+
+export const metadata: Metadata = { title: 'Not here' };
+
+export default function NotFound() {
+  return (
+    <MessagePage
+      picture={<BrokenWire />}
+      title="There is nothing at this address"
+      action={
+        <Link href="/sheets" className={buttonStyle('primary', 'large')}>
+          Go to the sheets
+        </Link>
+      }
+    >
+      It was never there, it is another team’s, or the link lost a piece on its way. Look for the sheet in the list, or
+      ask whoever sent the link.
+    </MessagePage>
+  );
+}
