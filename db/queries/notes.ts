@@ -1,8 +1,8 @@
 import 'server-only';
-import { literal, type Transaction } from 'sequelize';
+import { literal, QueryTypes, type Transaction } from 'sequelize';
 import type { NoteReply, NoteThread, Viewer } from '@/app/_shared/wire';
 import { noteAnchorSchema, type NoteAnchor, type NoteClass } from '@/canvas/document/notes';
-import { inTransaction, select } from '../client';
+import { database, inTransaction, select } from '../client';
 import { newId } from '../id';
 import { models } from '../models/models';
 
@@ -141,19 +141,15 @@ function setResolved(viewer: Viewer, noteId: string, resolved: boolean): Promise
   });
 }
 
-/** Moves the sheet's notes version, and with that locks the sheet's notes; false when the note is not the viewer's team's. */
+/**
+ * Moves the sheet's notes version, and with that locks the sheet's notes; false when the note is not the viewer's
+ * team's. Must come first in its transaction: what is read before it may be older than the lock.
+ */
 async function touch(viewer: Viewer, noteId: string, transaction: Transaction): Promise<boolean> {
-  const notes = await select<{ readonly sheetId: string }>(
-    `SELECT notes.sheetId FROM notes JOIN sheets ON sheets.id = notes.sheetId
+  const [, counted] = await database().query(
+    `UPDATE sheets JOIN notes ON notes.sheetId = sheets.id SET sheets.notesVersion = sheets.notesVersion + 1
       WHERE notes.id = :noteId AND sheets.teamId = :teamId`,
-    { noteId, teamId: viewer.teamId },
-    transaction,
-  );
-  const note = notes[0];
-  if (!note) return false;
-  const [counted] = await models().Sheet.update(
-    { notesVersion: literal('notesVersion + 1') },
-    { where: { id: note.sheetId, teamId: viewer.teamId }, transaction },
+    { type: QueryTypes.UPDATE, replacements: { noteId, teamId: viewer.teamId }, transaction },
   );
   return counted === 1;
 }
