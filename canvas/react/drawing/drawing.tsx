@@ -48,17 +48,11 @@ export function Drawing({ notes, openNote, onOpenNote, onPinNote }: DrawingProps
   const flow = useReactFlow();
   const flowStore = useStoreApi();
   const frame = useRef<HTMLDivElement>(null);
-  const pointer = useMemo(createPointerPlace, []);
-  const pinNote = useRef(onPinNote);
-  useEffect(() => {
-    pinNote.current = onPinNote;
-  }, [onPinNote]);
-  const gestures = useMemo(
-    () =>
-      createGestures(commands.context, (found, at) =>
-        pinNote.current?.(noteAnchor(store.getState().document, found, at)),
-      ),
-    [commands, store],
+  const [pointer] = useState(createPointerPlace);
+  const gestures = useMemo(() => createGestures(commands.context), [commands]);
+  useEffect(
+    () => gestures.onNote((found, at) => onPinNote?.(noteAnchor(store.getState().document, found, at))),
+    [gestures, onPinNote, store],
   );
 
   const parts = useSheet((state) => state.document.parts);
@@ -300,16 +294,16 @@ function useClipboardEvents(): void {
 function useRevealOnOpen(): void {
   const commands = useCommands();
   const flowStore = useStoreApi();
-  const [fitted] = useState(() => ({ done: false }));
+  const fitted = useRef(false);
   useEffect(() => {
     const fit = () => {
-      if (fitted.done || flowStore.getState().width === 0 || !flowStore.getState().d3Zoom) return;
-      fitted.done = true;
+      if (fitted.current || flowStore.getState().width === 0 || !flowStore.getState().d3Zoom) return;
+      fitted.current = true;
       commands.context().screen.zoomToFit();
     };
     fit();
     return flowStore.subscribe(fit);
-  }, [commands, flowStore, fitted]);
+  }, [commands, flowStore]);
 }
 
 function focusPart(target: EventTarget, store: ReturnType<typeof useSheetStore>): void {

@@ -56,10 +56,11 @@ export type Press = {
 
 export type Gestures = ReturnType<typeof createGestures>;
 
-export function createGestures(context: () => CommandContext, onNote: (hit: Hit, at: Point) => void) {
+export function createGestures(context: () => CommandContext) {
   let gesture: Gesture | null = null;
   const carryListeners = new Set<() => void>();
   const marqueeListeners = new Set<(box: Box | null) => void>();
+  const noteListeners = new Set<(hit: Hit, at: Point) => void>();
   const tellCarry = () => carryListeners.forEach((listener) => listener());
   const tellMarquee = (box: Box | null) => marqueeListeners.forEach((listener) => listener(box));
 
@@ -98,7 +99,7 @@ export function createGestures(context: () => CommandContext, onNote: (hit: Hit,
     }
     const found = hit(at);
     if (tool.kind === 'note') {
-      onNote(found, at.at);
+      noteListeners.forEach((listener) => listener(found, at.at));
       now.setTool({ kind: 'select' });
       return true;
     }
@@ -229,6 +230,11 @@ export function createGestures(context: () => CommandContext, onNote: (hit: Hit,
     onMarquee(listener: (box: Box | null) => void): () => void {
       marqueeListeners.add(listener);
       return () => marqueeListeners.delete(listener);
+    },
+    /** The place that a new note was pressed on. */
+    onNote(listener: (hit: Hit, at: Point) => void): () => void {
+      noteListeners.add(listener);
+      return () => noteListeners.delete(listener);
     },
   };
 }

@@ -36,7 +36,7 @@ function Choice({ close }: { close: () => void }) {
       wanted.every((word) => command.name.toLowerCase().includes(word)),
   );
   const at = Math.min(chosen, found.length - 1);
-  const use = (command: Command | undefined) => {
+  const start = (command: Command | undefined) => {
     if (!command) return;
     close();
     // After the dialog has given the focus back: the command may want it elsewhere.
@@ -45,7 +45,7 @@ function Choice({ close }: { close: () => void }) {
   const onKeyDown = (event: KeyboardEvent) => {
     if (event.key === 'ArrowDown') setChosen(Math.min(found.length - 1, at + 1));
     else if (event.key === 'ArrowUp') setChosen(Math.max(0, at - 1));
-    else if (event.key === 'Enter') use(found[at]);
+    else if (event.key === 'Enter') start(found[at]);
     else return;
     event.preventDefault();
   };
@@ -78,7 +78,7 @@ function Choice({ close }: { close: () => void }) {
               if (index === at) element?.scrollIntoView({ block: 'nearest' });
             }}
             onPointerMove={() => setChosen(index)}
-            onClick={() => use(command)}
+            onClick={() => start(command)}
             className={`flex cursor-pointer items-center justify-between gap-3 rounded-md px-2.5 py-1.5 text-[13px] ${index === at ? 'bg-voltage/10' : ''}`}
           >
             <span>{command.name}</span>
