@@ -1,20 +1,23 @@
 import type { Box } from './box';
 import { directionVector, type Direction } from './placement';
-import { samePoint, type Point } from './point';
+import { GRID, samePoint, type Point } from './point';
 
 /** One end of a wire: where it is, the way it leaves, and the body it must not run through. */
 export type RouteEnd = { readonly at: Point; readonly outward: Direction; readonly body: Box | null };
 
 const STUB = 20;
 const BEND_COST = 24;
+/** Leaving a pin sideways looks like a part on its side: worth two bends and a stub to avoid. */
+const SIDEWAYS_COST = 90;
 const AGAINST_COST = 400;
 const THROUGH_COST = 600;
 
 /**
  * The orthogonal course of a wire, from end to end, through the corners that a hand placed. Between two given points
- * it takes the cheapest of a fixed set of courses (straight, one bend, two bends, with a stub at either end), where
- * length, bends, leaving a pin against its direction and running through an end's own body all cost. It looks at
- * nothing but its two ends, so that moving some other part never moves this wire.
+ * it takes the cheapest of a fixed set of courses (straight, one bend, two bends, with a stub at either end; and where
+ * all of these run through a body, round the bodies), where length, bends, leaving a pin against its direction and
+ * running through an end's own body all cost. It looks at nothing but its two ends, so that moving some other part
+ * never moves this wire.
  */
 export function routeWire(from: RouteEnd, to: RouteEnd, corners: readonly Point[] = []): Point[] {
   if (corners.length === 0) return tidy(bestCourse(from, to));
@@ -31,13 +34,18 @@ export function routeWire(from: RouteEnd, to: RouteEnd, corners: readonly Point[
 function bestCourse(from: RouteEnd, to: RouteEnd): Point[] {
   let best: Point[] = [from.at, to.at];
   let bestCost = Infinity;
-  for (const course of courses(from, to)) {
-    const cost = courseCost(course, from, to);
-    if (cost < bestCost) {
-      best = course;
-      bestCost = cost;
+  const consider = (candidates: Iterable<Point[]>) => {
+    for (const course of candidates) {
+      const cost = courseCost(course, from, to);
+      if (cost < bestCost) {
+        best = course;
+        bestCost = cost;
+      }
     }
-  }
+  };
+  consider(courses(from, to));
+  // Only a wire that would run through a body needs the many courses round it.
+  if (bestCost >= THROUGH_COST) consider(detours(from, to));
   return best;
 }
 
@@ -61,6 +69,34 @@ function* courses(from: RouteEnd, to: RouteEnd): Generator<Point[]> {
   }
 }
 
+/** Courses along the sides of the bodies: from a stub to a line beside a body, along it, and to the other stub. */
+function* detours(from: RouteEnd, to: RouteEnd): Generator<Point[]> {
+  const bodies = [from.body, to.body].flatMap((body) => body ?? []);
+  const columns = bodies.flatMap(({ left, right }) => [snapDown(left - STUB), snapUp(right + STUB)]);
+  const rows = bodies.flatMap(({ top, bottom }) => [snapDown(top - STUB), snapUp(bottom + STUB)]);
+  for (const s of stubs(from)) {
+    for (const e of stubs(to)) {
+      for (const x of columns) {
+        yield [from.at, s, { x, y: s.y }, { x, y: e.y }, e, to.at];
+        for (const y of rows) {
+          yield [from.at, s, { x, y: s.y }, { x, y }, { x: e.x, y }, e, to.at];
+          yield [from.at, s, { x: s.x, y }, { x, y }, { x, y: e.y }, e, to.at];
+        }
+      }
+      for (const y of rows) yield [from.at, s, { x: s.x, y }, { x: e.x, y }, e, to.at];
+    }
+  }
+}
+
+function snapDown(coordinate: number): number {
+  // `+ 0` keeps −0 out of documents.
+  return Math.floor(coordinate / GRID) * GRID + 0;
+}
+
+function snapUp(coordinate: number): number {
+  return Math.ceil(coordinate / GRID) * GRID + 0;
+}
+
 function stubs(end: RouteEnd): readonly Point[] {
   if (end.outward === 'any') return [end.at];
   const v = directionVector(end.outward);
@@ -68,7 +104,7 @@ function stubs(end: RouteEnd): readonly Point[] {
 }
 
 function snapHalf(a: number, b: number): number {
-  return Math.round((a + b) / 20) * 10;
+  return Math.round((a + b) / 20) * 10 + 0;
 }
 
 function courseCost(course: readonly Point[], from: RouteEnd, to: RouteEnd): number {
@@ -92,7 +128,7 @@ function leavingCost(start: Point | undefined, next: Point | undefined, outward:
   const v = directionVector(outward);
   const along = Math.sign(next.x - start.x) * v.x + Math.sign(next.y - start.y) * v.y;
   if (along > 0) return 0;
-  return along < 0 ? AGAINST_COST : BEND_COST;
+  return along < 0 ? AGAINST_COST : SIDEWAYS_COST;
 }
 
 /** Whether a segment passes through the inside of a box (its rim does not count: pins lie on it). */
