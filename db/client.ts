@@ -43,7 +43,7 @@ function connect(): Sequelize {
       charset: 'utf8mb4',
       connectTimeout: 3_000,
       // A server that has stopped answering is one that cannot be reached; nothing here takes so long.
-      socketTimeout: 20_000,
+      socketTimeout: 10_000,
       // An update counts the rows it found: one that changes nothing must not look like one that found nothing.
       foundRows: true,
       sessionVariables: {

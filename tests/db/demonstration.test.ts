@@ -2,7 +2,7 @@ import { mkdir, mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { pathToFileURL } from 'node:url';
-import { afterAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Viewer } from '@/app/_shared/wire';
 import { writeSheetFile } from '@/canvas/document/export-file';
 import { models } from '@/db/models/models';
@@ -15,10 +15,11 @@ import accounts from '@/db/seeds/accounts.json';
 import { layDemonstration } from '@/db/seeds/demonstration';
 import { verifyPassword } from '@/db/password';
 import { documentAbout } from './support/documents';
-import { closeDatabase, freshDatabase } from './support/fresh-database';
+import { closeDatabase, emptyDatabase, freshDatabase } from './support/fresh-database';
 
 const folders: string[] = [];
-beforeEach(freshDatabase);
+beforeAll(freshDatabase);
+beforeEach(emptyDatabase);
 afterAll(async () => {
   await closeDatabase();
   await Promise.all(folders.map((folder) => rm(folder, { recursive: true })));

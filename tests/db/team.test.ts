@@ -1,16 +1,17 @@
-import { afterAll, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import type { Role } from '@/app/_shared/roles';
 import type { Viewer } from '@/app/_shared/wire';
 import { findViewer } from '@/db/queries/accounts';
 import { changeMemberRole, listMembers, removeMember } from '@/db/queries/team';
 import { addMember, makeTeam, memberIdOf } from './support/people';
-import { closeDatabase, freshDatabase } from './support/fresh-database';
+import { closeDatabase, emptyDatabase, freshDatabase } from './support/fresh-database';
 
 let team: Readonly<Record<Role, Viewer>>;
 let others: Readonly<Record<Role, Viewer>>;
 
+beforeAll(freshDatabase);
 beforeEach(async () => {
-  await freshDatabase();
+  await emptyDatabase();
   team = await makeTeam('Ours');
   others = await makeTeam('Theirs');
 });

@@ -9,4 +9,12 @@ export async function freshDatabase(): Promise<void> {
   await migrate();
 }
 
+/** Empties every table of a schema that `freshDatabase` brought up; quicker than bringing it up again. */
+export async function emptyDatabase(): Promise<void> {
+  // The children before the parents.
+  for (const table of ['replies', 'notes', 'snapshots', 'sheets', 'members', 'users', 'teams', 'attempts']) {
+    await database().query(`DELETE FROM ${table}`);
+  }
+}
+
 export { closeDatabase };
