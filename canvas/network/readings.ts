@@ -72,7 +72,7 @@ export function readNetwork(document: SheetDocument): Readings {
   const deadSources = findDeadSources(network, frequencyHz);
   if (!answer.ok) return { ...nothing, deadSources, cautions, problems: [...noted, onDrawing(answer, network)] };
   const balance = balanceOf(answer);
-  const problems = [...noted, ...answer.problems.map((found) => onDrawing(found, network))];
+  const problems = [...noted, ...gatherUnreferenced(answer.problems).map((found) => onDrawing(found, network))];
   if (balance && !balance.holds) {
     problems.push({
       message: `The power of the parts does not add up (${balance.ratio.toExponential(1)} of the total is left over), so these readings are not reliable. Extreme ratios between values are the usual cause.`,
@@ -155,6 +155,25 @@ function drawingProblems(document: SheetDocument, network: Network): SheetProble
     });
   }
   return problems;
+}
+
+/**
+ * While a network is being drawn, each part not yet joined is an island of its own. One sentence for all of them says
+ * as much as one for each.
+ */
+function gatherUnreferenced(problems: readonly Problem[]): readonly Problem[] {
+  const unreferenced = problems.filter(({ kind }) => kind === 'noReference');
+  if (unreferenced.length < 2) return problems;
+  const elements = unreferenced.flatMap((problem) => problem.elements);
+  const shown = elements.length > 8 ? [...elements.slice(0, 7), `${elements.length - 7} more`] : elements;
+  const gathered: Problem = {
+    ok: false,
+    kind: 'noReference',
+    elements,
+    nodes: unreferenced.flatMap((problem) => problem.nodes),
+    message: `${shown.slice(0, -1).join(', ')} and ${shown[shown.length - 1] ?? ''} have no connection to the reference node, so their node voltages are not determined. Connect each part of the drawing to the reference.`,
+  };
+  return [gathered, ...problems.filter(({ kind }) => kind !== 'noReference')];
 }
 
 function onDrawing(problem: Problem, network: Network): SheetProblem {
