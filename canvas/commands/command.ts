@@ -83,6 +83,8 @@ export type Command = {
   readonly id: string;
   readonly name: string;
   readonly group: CommandGroup;
+  /** What lists call it together with its likes: four arrows are one line in the list of keys. */
+  readonly listedAs?: string;
   /** Such as `mod+z`, `shift+t`, `arrowleft`; `mod` is ⌘ on a Mac and Ctrl elsewhere. */
   readonly keys: readonly string[];
   /** Whether it changes the sheet, and so needs the right to; reading and looking are for everyone. */

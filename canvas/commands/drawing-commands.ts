@@ -16,11 +16,15 @@ export function cursorOf(context: CommandContext): Point {
   return last ? last.at : snap(context.screen.middle());
 }
 
+function withArticle(noun: string): string {
+  return `${/^[aeiou]/.test(noun) ? 'an' : 'a'} ${noun}`;
+}
+
 function pick(kind: PartKind): Command {
   const definition = definitionOf(kind);
   return {
     id: `take.${kind}`,
-    name: `Take a ${definition.name.toLowerCase()}`,
+    name: `Take ${withArticle(definition.name.toLowerCase())}`,
     group: 'Draw',
     keys: [definition.key],
     edits: true,
@@ -113,6 +117,7 @@ function arrow(name: string, x: number, y: number): Command[] {
     {
       id: `cursor.${name}`,
       name: `Move the cursor ${name}`,
+      listedAs: 'Move what is in hand',
       group: 'Draw',
       keys: [`arrow${name}`],
       edits: true,
@@ -122,6 +127,7 @@ function arrow(name: string, x: number, y: number): Command[] {
     {
       id: `cursor.far.${name}`,
       name: `Move the cursor far ${name}`,
+      listedAs: 'Move what is in hand, five squares at a time',
       group: 'Draw',
       keys: [`shift+arrow${name}`],
       edits: true,

@@ -68,6 +68,7 @@ function nudge(name: string, x: number, y: number): Command[] {
   const make = (keys: string, steps: number, words: string): Command => ({
     id: `nudge.${words}${name}`,
     name: `Move what is selected ${words === 'far.' ? 'far ' : ''}${name}`,
+    listedAs: `Move what is selected${words === 'far.' ? ', five squares at a time' : ''}`,
     group: 'Arrange',
     keys: [keys],
     edits: true,

@@ -27,7 +27,7 @@ export const READING_LINE = 19;
 /** Widths that hold the longest text a block can show, so that nothing moves when a figure changes. */
 const CHARACTER = 7.25;
 const READING_WIDTH = { polar: 146, rectangular: 178 } as const;
-const GAP = 7;
+const GAP = 10;
 /** The reference mark, node names and junctions carry no label of their own beside them. */
 const MARK_KINDS: ReadonlySet<Part['kind']> = new Set(['reference', 'nodeName', 'junction']);
 

@@ -58,6 +58,8 @@ export function createSheetStore(document: SheetDocument, mayEdit: boolean): She
         readings: next === state.document ? state.readings : readNetwork(next),
         history: moved.history,
         editing: null,
+        // A wire in hand may have begun on what has just gone.
+        tool: { kind: 'select' },
         spoken: spoken(state, `${verb}: ${moved.label}.`),
       }));
     };
@@ -100,7 +102,7 @@ export function createSheetStore(document: SheetDocument, mayEdit: boolean): She
       redo: () => go(redo(get().history, get()), 'Redid'),
       say: (text) => set((state) => ({ spoken: spoken(state, text) })),
       replace: (next) =>
-        set({ document: next, readings: readNetwork(next), selection: NOTHING_SELECTED, history: NO_HISTORY, editing: null }),
+        set({ document: next, readings: readNetwork(next), selection: NOTHING_SELECTED, history: NO_HISTORY, editing: null, tool: { kind: 'select' } }),
     };
   });
 }

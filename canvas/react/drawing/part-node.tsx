@@ -39,7 +39,7 @@ export const PartNodeView = memo(function PartNodeView({ data }: NodeProps<PartN
 
 function Outline({ part, selected, faulty }: { part: Part; selected: boolean; faulty: boolean }) {
   if (!selected && !faulty) return null;
-  const body = grow(bodyOf(part), part.kind === 'junction' ? 1 : 7);
+  const body = grow(bodyOf(part), part.kind === 'junction' ? 1 : 6);
   const shape = {
     x: body.left - part.at.x,
     y: body.top - part.at.y,

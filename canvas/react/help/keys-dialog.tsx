@@ -19,6 +19,18 @@ const BY_POINTER = [
   ['Middle or right button, dragged', 'Move the drawing'],
 ] as const;
 
+type Line = { readonly name: string; readonly keys: readonly string[] };
+
+/** A line for each command of a group that has a key; commands that are listed together share one. */
+function linesOf(group: CommandGroup): readonly Line[] {
+  const lines = new Map<string, Line>();
+  for (const { name, listedAs = name, keys, group: of } of commands) {
+    if (of !== group || keys.length === 0) continue;
+    lines.set(listedAs, { name: listedAs, keys: [...(lines.get(listedAs)?.keys ?? []), ...keys] });
+  }
+  return [...lines.values()];
+}
+
 /** Every key, from the same records that run them. */
 export function KeysDialog() {
   const store = useSheetStore();
@@ -31,18 +43,16 @@ export function KeysDialog() {
           <section key={group}>
             <h3 className="mb-1.5 text-[13px] font-semibold text-muted">{group}</h3>
             <dl className="space-y-1">
-              {commands
-                .filter((command) => command.group === group && command.keys.length > 0)
-                .map((command) => (
-                  <div key={command.id} className="flex items-baseline justify-between gap-3 text-[13px]">
-                    <dt>{command.name}</dt>
-                    <dd className="flex shrink-0 gap-1.5">
-                      {command.keys.map((key) => (
-                        <Kbd key={key}>{keyWords(key, onMac)}</Kbd>
-                      ))}
-                    </dd>
-                  </div>
-                ))}
+              {linesOf(group).map(({ name, keys }) => (
+                <div key={name} className="flex items-baseline justify-between gap-3 text-[13px]">
+                  <dt>{name}</dt>
+                  <dd className="flex shrink-0 flex-wrap justify-end gap-1.5">
+                    {keys.map((key) => (
+                      <Kbd key={key}>{keyWords(key, onMac)}</Kbd>
+                    ))}
+                  </dd>
+                </div>
+              ))}
             </dl>
           </section>
         ))}
