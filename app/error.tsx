@@ -1,6 +1,6 @@
 'use client';
 
-import { useEffect } from 'react';
+import { loadPage } from './_client/load-page';
 import { MessagePage } from './_frame/message-page';
 import { Button } from '@/components/button';
 
@@ -12,15 +12,12 @@ export default function PageError({
   readonly error: Error & { readonly digest?: string };
   readonly reset: () => void;
 }) {
-  useEffect(() => {
-    console.error(error);
-  }, [error]);
   return (
     <MessagePage
       title="This page could not be made"
       action={
         <>
-          <Button size="large" onClick={() => window.location.assign('/sheets')}>
+          <Button size="large" onClick={() => loadPage('/sheets')}>
             Go to the sheets
           </Button>
           <Button variant="primary" size="large" onClick={() => retry(reset)}>

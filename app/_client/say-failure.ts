@@ -1,3 +1,4 @@
+import { loadPage } from './load-page';
 import type { AppError } from '@/app/_shared/result';
 import { toast } from '@/components/toast';
 
@@ -15,6 +16,6 @@ const SIGN_IN = {
   label: 'Sign in',
   onPress: () => {
     const here = `${window.location.pathname}${window.location.search}`;
-    window.location.assign(`/sign-in?next=${encodeURIComponent(here)}`);
+    loadPage(`/sign-in?next=${encodeURIComponent(here)}`);
   },
 };

@@ -28,10 +28,10 @@ export function FrontBand({ step, onStep, response }: FrontBandProps) {
         <svg viewBox="0 0 100 100" preserveAspectRatio="none" aria-hidden="true" className="absolute inset-0 size-full">
           <g fill="none" vectorEffect="non-scaling-stroke" stroke="var(--grid)">
             {[0, -20, -40, -60].map((db) => (
-              <path key={db} d={`M0 ${percentOfDb(db)}h100`} vectorEffect="non-scaling-stroke" />
+              <path key={db} d={`M0 ${percentOfDb(db).toFixed(2)}h100`} vectorEffect="non-scaling-stroke" />
             ))}
             {decadeLines().map((hz) => (
-              <path key={hz} d={`M${percentOfHz(hz)} 0v100`} vectorEffect="non-scaling-stroke" />
+              <path key={hz} d={`M${percentOfHz(hz).toFixed(2)} 0v100`} vectorEffect="non-scaling-stroke" />
             ))}
           </g>
           <path
@@ -43,16 +43,16 @@ export function FrontBand({ step, onStep, response }: FrontBandProps) {
             vectorEffect="non-scaling-stroke"
           />
         </svg>
-        <div aria-hidden="true" className="pointer-events-none absolute inset-y-0 w-px bg-ink" style={{ left: `${at}%` }}>
+        <div aria-hidden="true" className="pointer-events-none absolute inset-y-0 w-px bg-ink" style={{ left: `${at.toFixed(2)}%` }}>
           <span
             className="absolute bottom-full mb-1.5 rounded-[5px] bg-ink px-2 py-0.5 font-mono text-[13px] whitespace-nowrap text-paper"
-            style={{ transform: `translateX(-${at}%)` }}
+            style={{ transform: `translateX(-${at.toFixed(2)}%)` }}
           >
             {frequency}
           </span>
           <span
             className="absolute -left-1 size-2.5 -translate-y-1/2 rounded-full bg-ink"
-            style={{ top: `${percentOfDb(response[step] ?? 0)}%` }}
+            style={{ top: `${percentOfDb(response[step] ?? 0).toFixed(2)}%` }}
           />
         </div>
         <input
@@ -70,7 +70,7 @@ export function FrontBand({ step, onStep, response }: FrontBandProps) {
       </div>
       <div aria-hidden="true" className="relative mt-1.5 h-5 font-mono text-xs text-muted">
         {TICKS_HZ.map((hz) => (
-          <span key={hz} className="absolute -translate-x-1/2 whitespace-nowrap" style={{ left: `${percentOfHz(hz)}%` }}>
+          <span key={hz} className="absolute -translate-x-1/2 whitespace-nowrap" style={{ left: `${percentOfHz(hz).toFixed(2)}%` }}>
             {formatQuantity(hz, 'Hz', 1)}
           </span>
         ))}

@@ -8,6 +8,7 @@ import { changeRole, removeMember } from './actions';
 import { ROLE_NAMES } from './roles-in-words';
 import { attempt } from '@/app/_client/attempt';
 import { fetchResult, type ReadFailure } from '@/app/_client/fetch-result';
+import { loadPage } from '@/app/_client/load-page';
 import { failureText, sayFailure } from '@/app/_client/say-failure';
 import { ROLES, type Role } from '@/app/_shared/roles';
 import type { MemberItem } from '@/app/_shared/wire';
@@ -63,7 +64,7 @@ export function TeamView({ first, may }: TeamViewProps) {
     const next = members.filter((one) => one.id !== member.id);
     const done = await change(next, () => removeMember({ memberId: member.id }));
     if (!done) return;
-    if (member.self) window.location.assign('/');
+    if (member.self) loadPage('/');
     else toast.done(`${member.name} is no longer in the team.`);
   };
 

@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { z } from 'zod';
 import { FormRefusal } from '../form-refusal';
+import { loadPage } from '@/app/_client/load-page';
 import { signInWithPassword } from '@/app/_client/session';
 import { emailSchema } from '@/app/_shared/wire';
 import { Button } from '@/components/button';
@@ -43,7 +44,7 @@ export function SignInForm({ next, refusal: firstRefusal }: SignInFormProps) {
     }
     setLeaving(true);
     // A full load: every server component then sees the session, and the browser offers to keep the password.
-    window.location.assign(next);
+    loadPage(next);
   });
 
   return (

@@ -6,6 +6,7 @@ import { useForm } from 'react-hook-form';
 import { signUp } from '../actions';
 import { FormRefusal } from '../form-refusal';
 import { attempt } from '@/app/_client/attempt';
+import { loadPage } from '@/app/_client/load-page';
 import { failureText } from '@/app/_client/say-failure';
 import { signInWithPassword } from '@/app/_client/session';
 import { signUpInput } from '@/app/_shared/wire';
@@ -38,7 +39,7 @@ export function SignUpForm({ next }: { readonly next: string }) {
     setLeaving(true);
     const outcome = await signInWithPassword(input.email, input.password);
     // The account is there; if only the signing in failed, that page says why and tries again.
-    window.location.assign(outcome.ok ? next : `/sign-in?next=${encodeURIComponent(next)}`);
+    loadPage(outcome.ok ? next : `/sign-in?next=${encodeURIComponent(next)}`);
   });
 
   const busy = formState.isSubmitting || leaving;

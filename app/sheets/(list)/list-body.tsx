@@ -1,5 +1,6 @@
 'use client';
 
+import { useRouter } from 'next/navigation';
 import { useCallback, useRef, useState, type KeyboardEvent } from 'react';
 import { ListEmpty } from './list-empty';
 import type { ListPermissions } from './list-query';
@@ -26,6 +27,7 @@ export type ListBodyProps = {
 const COLUMNS = ['Parts', 'Snapshots', 'Open notes', 'Revision'] as const;
 
 export function ListBody({ state, query, may, onBegin, onImport, onShowAll }: ListBodyProps) {
+  const router = useRouter();
   const rows = useRef<HTMLUListElement>(null);
   const [renaming, setRenaming] = useState<string | null>(null);
   const { list, failure, waiting, refresh, rename, archive, restore, clone } = state;
@@ -61,7 +63,7 @@ export function ListBody({ state, query, may, onBegin, onImport, onShowAll }: Li
       void clone(sheet).then((id) => {
         if (id === null) return;
         toast.done(`“${sheet.name}” was cloned.`, {
-          action: { label: 'Open', onPress: () => window.location.assign(`/sheets/${id}`) },
+          action: { label: 'Open', onPress: () => router.push(`/sheets/${id}`) },
         });
         requestAnimationFrame(() => focusRow(id));
       });

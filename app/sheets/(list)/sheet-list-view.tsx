@@ -50,12 +50,12 @@ export function SheetListView({ first, may }: SheetListViewProps) {
   );
 
   const begin = may.create ? () => setBeginning(true) : undefined;
-  const pick = may.import ? () => picker.current?.click() : undefined;
+  const pick = (): void => picker.current?.click();
 
   return (
     <>
       <PageHeading title="Sheets">
-        {pick !== undefined && (
+        {may.import && (
           <Button busy={importing} icon={<FileUp size={16} strokeWidth={1.75} aria-hidden="true" />} onClick={pick}>
             Import
           </Button>
@@ -72,7 +72,7 @@ export function SheetListView({ first, may }: SheetListViewProps) {
         query={asked}
         may={may}
         onBegin={begin}
-        onImport={pick}
+        onImport={may.import ? pick : undefined}
         onShowAll={() => setQuery(FIRST_QUERY)}
       />
       {may.import && (

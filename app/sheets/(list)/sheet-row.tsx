@@ -3,7 +3,7 @@
 import { Archive, ArchiveRestore, Copy, Download, EllipsisVertical, PencilLine } from 'lucide-react';
 import Link from 'next/link';
 import { useRouter } from 'next/navigation';
-import { useRef, type ReactNode } from 'react';
+import { useState, type ReactNode } from 'react';
 import type { ListPermissions } from './list-query';
 import { RenameField } from './rename-field';
 import { rowGrid } from './row-grid';
@@ -126,7 +126,7 @@ const icon = { size: 16, strokeWidth: 1.75, 'aria-hidden': true } as const;
 
 function RowMenu({ sheet, may, actions }: Omit<SheetRowProps, 'renaming'>) {
   // Renaming begins when the menu has closed, and takes the focus that would go back to the button.
-  const renameNext = useRef(false);
+  const [renameNext, setRenameNext] = useState(false);
   const entries: MenuEntry[] = [];
   if (may.rename && !sheet.archived) {
     entries.push({
@@ -134,9 +134,7 @@ function RowMenu({ sheet, may, actions }: Omit<SheetRowProps, 'renaming'>) {
       label: 'Rename',
       shortcut: 'F2',
       icon: <PencilLine {...icon} />,
-      onSelect: () => {
-        renameNext.current = true;
-      },
+      onSelect: () => setRenameNext(true),
     });
   }
   if (may.clone) {
@@ -176,8 +174,8 @@ function RowMenu({ sheet, may, actions }: Omit<SheetRowProps, 'renaming'>) {
         label={`Actions for ${sheet.name}`}
         entries={entries}
         onCloseFocus={(event) => {
-          if (!renameNext.current) return;
-          renameNext.current = false;
+          if (!renameNext) return;
+          setRenameNext(false);
           event.preventDefault();
           actions.onRename(sheet);
         }}
