@@ -26,6 +26,8 @@ export class Engine {
   readonly readings: Readings;
   private readonly prepared = new Map<string, Prepared>();
   private current: Prepared | undefined;
+  /** The condition of the network at the last frequency; see `Solution`. */
+  condition: number | undefined;
   private solved: readonly boolean[] = [];
 
   constructor(list: ElementList) {
@@ -43,6 +45,7 @@ export class Engine {
     const problems: Problem[] = [...noReference(network, structure)];
     const { components } = structure;
     const checks = components.map((component) => checkComponent(network, structure, component, branches));
+    this.condition = 1;
     const hasNoWayOn = checks.map(({ verdict }) => verdict === 'noWayOn');
     this.solved = components.map((component) => {
       const check = checks[component.index];
@@ -52,6 +55,8 @@ export class Engine {
       if (check.verdict !== 'sound' || this.isEnteredBy(component, structure, hasNoWayOn)) return false;
       const outcome = solveComponent(network, structure, component, form, branches, frequency, readings);
       problems.push(...outcome.problems);
+      if (form.condition === undefined || this.condition === undefined) this.condition = undefined;
+      else this.condition = Math.max(this.condition, form.condition);
       return outcome.solved;
     });
     this.setGivenCurrents(structure, hasNoWayOn);
@@ -59,24 +64,22 @@ export class Engine {
     return problems;
   }
 
-  /** Whether a node lies in a component that was solved. */
+  /** Whether a node lies in a component that was solved; the reference node always does. */
   isSolved(node: number): boolean {
+    if (node === REFERENCE) return true;
     const index = this.current?.structure.componentOf[node] ?? -1;
     return this.solved[index] === true;
   }
 
-  /**
-   * Whether a given current without a way on at its other end enters the component. At the reference node that does no
-   * harm: the current law there is not one of the equations.
-   */
+  /** Whether a given current without a way on at its other end enters the component. */
   private isEnteredBy(component: Component, { componentOf }: Structure, hasNoWayOn: readonly boolean[]): boolean {
     const { first, second } = this.network;
     return component.outerCurrents.some((row) => {
       if (this.branches.isGivenZero(row)) return false;
       const a = first[row] ?? 0;
       const b = second[row] ?? 0;
-      const [here, there] = componentOf[a] === component.index ? [a, b] : [b, a];
-      return here !== REFERENCE && hasNoWayOn[componentOf[there] ?? -1] === true;
+      const there = componentOf[a] === component.index ? b : a;
+      return hasNoWayOn[componentOf[there] ?? -1] === true;
     });
   }
 

@@ -94,12 +94,15 @@ function sumsAtNodes(
     sums.get(first[row] ?? 0)?.add(re, im);
     sums.get(second[row] ?? 0)?.add(-re, -im);
   }
+  const isHere = new Set(component.nodes);
   for (const rows of [component.innerCurrents, component.outerCurrents]) {
     for (const row of rows) {
       const re = branches.sRe[row] ?? 0;
       const im = branches.sIm[row] ?? 0;
-      sums.get(first[row] ?? 0)?.add(re, im);
-      sums.get(second[row] ?? 0)?.add(-re, -im);
+      // What goes to another component comes back by the reference node, the root; without one it adds up to zero.
+      const endOf = (node: number): number => (isHere.has(node) ? node : (component.nodes[0] ?? 0));
+      sums.get(endOf(first[row] ?? 0))?.add(re, im);
+      sums.get(endOf(second[row] ?? 0))?.add(-re, -im);
     }
   }
   return sums;

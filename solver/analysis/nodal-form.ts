@@ -18,6 +18,8 @@ const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
  * elimination. The work space is kept for the next frequency of the same structure.
  */
 export class NodalForm {
+  /** What `amplification` found at the last frequency; undefined where it was not trusted. */
+  condition: number | undefined;
   private readonly mesh: StarMesh;
   private readonly scratch = { re: 0, im: 0 };
 
@@ -36,8 +38,11 @@ export class NodalForm {
   solve(branches: BranchTable, readings: Readings): boolean {
     const { mesh, component } = this;
     this.loadAdmittances(branches);
+    this.condition = undefined;
     if (mesh.factor() < TRUSTED_PIVOT) return false;
-    if (!(this.amplification(branches) < TRUSTED_AMPLIFICATION)) return false;
+    const amplification = this.amplification(branches);
+    if (!(amplification < TRUSTED_AMPLIFICATION)) return false;
+    this.condition = amplification;
     this.loadSources(branches);
     mesh.solve();
     for (const node of component.nodes) {

@@ -32,6 +32,13 @@ export interface Solution {
    * for a good solution; it does not prove one.
    */
   readonly residual: number;
+  /**
+   * An estimate of the network's condition at this frequency: the largest voltage, in volts, across any element when
+   * every element has an electromotive force of one volt in series. Near 1 for resistances, the quality factor at a
+   * resonance; relative errors of a value may come out so many times larger. Undefined where the network is so near to
+   * having no unique solution that it was solved in branch form.
+   */
+  readonly condition: number | undefined;
   readonly balance: PowerBalance;
   /** What could not be solved, or is not unique; empty when all is determined. */
   readonly problems: readonly Problem[];

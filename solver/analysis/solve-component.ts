@@ -12,6 +12,8 @@ import type { Component, Structure } from './structure';
 /** Values between these keep every product and quotient of the elimination within the range of the arithmetic. */
 const SMALLEST = 1e-140;
 const LARGEST = 1e140;
+/** The product of two readings of this size is still finite, and so are some hundred of them added up. */
+const LARGEST_READING = 1e150;
 
 /** What can be said of a component before anything is computed. */
 export interface ComponentCheck {
@@ -81,7 +83,7 @@ export function solveComponent(
     }
   }
   readGivenVoltages(network, structure, component, branches, readings);
-  if (!isFinite(component, readings)) return { solved: false, problems: [rangeProblem(network, component, [])] };
+  if (!isInRange(component, readings)) return { solved: false, problems: [rangeProblem(network, component, [])] };
 
   for (const node of component.nodes) readings.vKnown[node] = component.grounded && !unknown.nodes.has(node) ? 1 : 0;
   for (const row of component.admittances) {
@@ -134,12 +136,13 @@ function netCurrentIsZero(
   return currentsAgree(net, size);
 }
 
-function isFinite(component: Component, readings: Readings): boolean {
+/** Whether all readings are finite, and small enough that a power, their product, is too. */
+function isInRange(component: Component, readings: Readings): boolean {
   const { vRe, vIm, dRe, dIm, iRe, iIm } = readings;
-  const finite = (array: Float64Array, at: number): boolean => Number.isFinite(array[at]);
+  const fits = (array: Float64Array, at: number): boolean => Math.abs(array[at] ?? Infinity) <= LARGEST_READING;
   const rows = [...component.admittances, ...component.treeVoltages, ...component.innerCurrents];
   return (
-    component.nodes.every((node) => finite(vRe, node) && finite(vIm, node)) &&
-    rows.every((row) => finite(dRe, row) && finite(dIm, row) && finite(iRe, row) && finite(iIm, row))
+    component.nodes.every((node) => fits(vRe, node) && fits(vIm, node)) &&
+    rows.every((row) => fits(dRe, row) && fits(dIm, row) && fits(iRe, row) && fits(iIm, row))
   );
 }

@@ -1,8 +1,9 @@
 import { Complex } from 'complex.js';
-import { ADMITTANCE } from '../elements/branch-table';
+import { ADMITTANCE, GIVEN_CURRENT } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
 import { validateElementList } from '../elements/validate-element-list';
 import { Engine } from './engine';
+import { REFERENCE } from './network';
 import type { Problem } from './problem';
 import { problem } from './problem';
 import type { PowerBalance, Solution } from './solution';
@@ -47,9 +48,14 @@ export function solve(list: ElementList, options: SolveOptions): Solution | Prob
   return toSolution(engine, frequency, problems);
 }
 
-/** Whether any element's current, or any node's voltage but the reference's, is determined. */
-export function isAnythingKnown({ readings }: Engine): boolean {
-  return readings.iKnown.includes(1) || readings.vKnown.includes(1, 1);
+/** Whether any node's voltage but the reference's, or any current that is not just given, is determined. */
+function isAnythingKnown(engine: Engine): boolean {
+  const { network, branches, readings } = engine;
+  if (readings.vKnown.includes(1, REFERENCE + 1)) return true;
+  return network.elements.some((_, row) => {
+    if (readings.iKnown[row] !== 1) return false;
+    return branches.form[row] !== GIVEN_CURRENT || (engine.isSolved(network.first[row] ?? 0) && engine.isSolved(network.second[row] ?? 0));
+  });
 }
 
 function toSolution(engine: Engine, frequency: number, problems: readonly Problem[]): Solution {
@@ -85,6 +91,7 @@ function toSolution(engine: Engine, frequency: number, problems: readonly Proble
     current,
     power,
     residual: residualOf(engine),
+    condition: engine.condition,
     balance: balanceOf(engine),
     problems,
   };

@@ -7,12 +7,13 @@ import type { Network } from './network';
 import { REFERENCE } from './network';
 
 /**
- * A conducting component: nodes that admittances and given voltages tie together. Between components there are only
- * given currents and open circuits, so each is solved by itself.
+ * A conducting component: nodes that admittances and given voltages tie together, not counting ties by way of the
+ * reference node, whose voltage is known whatever happens. Between components there are only given currents, open
+ * circuits and the reference node, so each is solved by itself, and what is wrong in one does no harm to another.
  */
 export interface Component {
   readonly index: number;
-  /** Its nodes, the root first; the root is the reference node where the component has it. */
+  /** Its nodes, the root first; the root is the reference node where anything that conducts leads there. */
   readonly nodes: readonly number[];
   readonly grounded: boolean;
   /** Rows with both ends in it that are admittances. */
@@ -46,12 +47,13 @@ export interface VoltageLoop {
  */
 export interface Structure {
   readonly components: readonly Component[];
+  /** The component of each node. The reference node, which every grounded component has, stands under a component of its own. */
   readonly componentOf: Int32Array;
   /** Sets of nodes that elements of any form join: one number a set. */
   readonly islandOf: Int32Array;
   /** The island of the reference node. */
   readonly referenceIsland: number;
-  /** Nodes joined by given voltages of zero are one vertex; numbered within each component. */
+  /** Nodes joined by given voltages of zero are one vertex; numbered within each component, its root 0. */
   readonly vertexOf: Int32Array;
   /** A node for each component's vertices. */
   readonly nodeOfVertex: readonly Int32Array[];
@@ -84,11 +86,13 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
   const joined = new DisjointSets(nodeCount);
   const merged = new DisjointSets(nodeCount);
   const grouped = new DisjointSets(nodeCount);
+  const isGrounded = new Set<number>([REFERENCE]);
   for (let row = 0; row < branches.size; row++) {
     const [a, b] = ends(row);
     joined.union(a, b);
     if (branches.form[row] === GIVEN_CURRENT) continue;
-    conducting.union(a, b);
+    if (a !== REFERENCE && b !== REFERENCE) conducting.union(a, b);
+    else isGrounded.add(a === REFERENCE ? b : a);
     if (branches.form[row] !== GIVEN_VOLTAGE) continue;
     grouped.union(a, b);
     if (branches.isGivenZero(row)) merged.union(a, b);
@@ -109,10 +113,12 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
     componentOf[node] = index;
     nodesOf[index]?.push(node);
   }
+  const grounded = new Set(Array.from(isGrounded, (node) => componentOf[node] ?? -1));
+  for (const index of grounded) if (index !== componentOf[REFERENCE]) nodesOf[index]?.unshift(REFERENCE);
 
   const vertexOf = new Int32Array(nodeCount);
   const nodeOfVertex = nodesOf.map((nodes) => numberVertices(nodes, merged, vertexOf));
-  const rows = sortRows(network, branches, componentOf, forest, nodesOf.length);
+  const rows = sortRows(network, branches, componentOf, grounded, forest, nodesOf.length);
   const components = nodesOf.map((nodes, index): Component => {
     const mine = rows[index] ?? emptyRows();
     const currents = [...mine.innerCurrents, ...mine.outerCurrents].filter((row) => !branches.isGivenZero(row));
@@ -140,7 +146,7 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
       pairs,
     });
     const slotOfRow = new Map(inSlots.map((row) => [row, slotOfPairRow(plan, pairOfRow.get(row))]));
-    return { index, nodes, grounded: nodes[0] === REFERENCE, ...mine, plan, slotOfRow };
+    return { index, nodes, grounded: grounded.has(index), ...mine, plan, slotOfRow };
   });
 
   return {
@@ -261,23 +267,27 @@ function sortRows(
   { first, second }: Network,
   branches: BranchTable,
   componentOf: Int32Array,
+  grounded: ReadonlySet<number>,
   forest: Forest,
   componentCount: number,
 ): ComponentRows[] {
   const sorted = Array.from({ length: componentCount }, emptyRows);
+  /** The component that a row lies in: that of its end that is not the reference node, if one is not. */
+  const homeOf = (row: number): number => {
+    const a = first[row] ?? 0;
+    return componentOf[a === REFERENCE ? (second[row] ?? 0) : a] ?? 0;
+  };
   for (let row = 0; row < branches.size; row++) {
-    const one = componentOf[first[row] ?? 0] ?? 0;
-    const other = componentOf[second[row] ?? 0] ?? 0;
-    if (branches.form[row] === ADMITTANCE) sorted[one]?.admittances.push(row);
+    const home = homeOf(row);
+    if (branches.form[row] === ADMITTANCE) sorted[home]?.admittances.push(row);
     if (branches.form[row] !== GIVEN_CURRENT) continue;
-    if (one === other) {
-      sorted[one]?.innerCurrents.push(row);
-    } else {
-      sorted[one]?.outerCurrents.push(row);
-      sorted[other]?.outerCurrents.push(row);
-    }
+    const ends = [first[row] ?? 0, second[row] ?? 0].filter((node) => node !== REFERENCE);
+    const homes = new Set(ends.map((node) => componentOf[node] ?? 0));
+    const isInner = ends.length === 2 ? homes.size === 1 : grounded.has(home);
+    if (isInner) sorted[home]?.innerCurrents.push(row);
+    else for (const index of homes) sorted[index]?.outerCurrents.push(row);
   }
-  for (const row of forest.order) sorted[componentOf[first[row] ?? 0] ?? 0]?.treeVoltages.push(row);
-  for (const loop of forest.loops) sorted[componentOf[first[loop.closing] ?? 0] ?? 0]?.loops.push(loop);
+  for (const row of forest.order) sorted[homeOf(row)]?.treeVoltages.push(row);
+  for (const loop of forest.loops) sorted[homeOf(loop.closing)]?.loops.push(loop);
   return sorted;
 }
