@@ -54,7 +54,7 @@ function unquoted(raw) {
 
 /**
  * Reads the environment and `.env`. A variable that is set to nothing counts as not set, so that a copy of
- * `.env.example` changes nothing.
+ * `.env.example` changes nothing, and `DATABASE_URL= npm start` leaves that line of `.env` out for once.
  *
  * @param {import('./processes.mjs').Environment} [environment]
  * @param {string} [file]
@@ -66,7 +66,9 @@ export function readSettings(environment = process.env, file = path.join(root, '
   /** @type {Record<string, string | undefined>} */
   const env = {};
   for (const [name, value] of [...Object.entries(fromFile), ...Object.entries(environment)]) {
-    if (value !== undefined && value !== '') env[name] = value;
+    if (value === undefined) continue;
+    if (value === '') delete env[name];
+    else env[name] = value;
   }
   return {
     env,

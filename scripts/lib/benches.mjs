@@ -1,0 +1,122 @@
+// @ts-check
+import { existsSync, readdirSync } from 'node:fs';
+import path from 'node:path';
+import readline from 'node:readline';
+import { ensureBuild } from './build.mjs';
+import { firstPort, openDatabase } from './database.mjs';
+import { chromium, mariadb } from './debian.mjs';
+import { figureIn, figureTable } from './figures.mjs';
+import { measureSecondStart } from './measure-start.mjs';
+import { layoutOf, root } from './paths.mjs';
+import { ended, launch, signalGroup, stopChild } from './processes.mjs';
+import { Failure, say, sayOnStandardError, step } from './say.mjs';
+import { readSettings } from './settings.mjs';
+import { claimState, install, requireSpace } from './setup.mjs';
+import { stopLater } from './shutdown.mjs';
+import { serveTestDatabase } from './tests.mjs';
+
+/** @typedef {import('./figures.mjs').Figure} Figure */
+
+const folder = path.join(root, 'tests/bench');
+const command = 'npm run bench';
+
+/** The area that has a figure which is measured here, since only the set-up can start itself a second time. */
+const startArea = 'app';
+
+/**
+ * Measures the named areas, or all, and prints their figures. It judges none of them.
+ *
+ * @param {object} wanted
+ * @param {readonly string[]} wanted.areas
+ * @param {boolean} wanted.json one object a line on standard output, everything else on standard error
+ * @returns {Promise<number>} exit code: 1 when a bench came to grief
+ */
+export async function runBenches({ areas, json }) {
+  if (json) sayOnStandardError();
+  const known = knownAreas();
+  const unknown = areas.find((area) => !known.includes(area));
+  if (unknown !== undefined) {
+    throw new Failure(`There is no area "${unknown}" to measure; choose from ${known.join(', ')}.`);
+  }
+  const chosen = areas.length === 0 ? known : areas;
+
+  const settings = readSettings();
+  const layout = layoutOf(path.join(settings.stateDir, 'bench'));
+  await claimState(layout, command);
+  requireSpace(layout);
+  await install({ programs: settings.databaseUrl === null ? [mariadb, chromium] : [chromium], layout, command });
+  await ensureBuild({ command, logs: layout.logs, serve: true });
+  const { NODE_ENV: _mode, NEXTAUTH_URL: _url, NEXTAUTH_SECRET: _secret, ...env } = settings.env;
+
+  /** @type {Figure[]} */
+  const figures = [];
+  const troubles = [];
+  /** @param {Figure} figure */
+  const note = (figure) => {
+    figures.push(figure);
+    if (json) process.stdout.write(`${JSON.stringify(figure)}\n`);
+  };
+
+  if (chosen.includes(startArea)) {
+    const value = await step(
+      'Measuring a second npm start',
+      // DATABASE_URL may name a database of the person's; these starts lay demonstration data and take a private one.
+      () => measureSecondStart({ stateDir: path.join(layout.dir, 'start'), env: { ...env, DATABASE_URL: '' } }),
+      () => 'Measured',
+    ).catch((error) => {
+      troubles.push(`${startArea}: ${error.message}`);
+      return null;
+    });
+    if (value !== null) note({ area: startArea, name: 'start.second.s', value, unit: 's' });
+  }
+
+  const { testUrl } = await openDatabase({ givenUrl: settings.databaseUrl, layout, preferredPort: firstPort.bench });
+  const { baseUrl, application } = await serveTestDatabase({ layout, env, testUrl, preferredPort: 3300 });
+  const benchEnvironment = { ...application, BASE_URL: baseUrl, OHMSTEAD_STATE: layout.dir };
+  for (const area of chosen.filter((name) => existsSync(fileOf(name)))) {
+    const code = await step(`Measuring ${area}`, () => measure(area, benchEnvironment, note), () => `Measured ${area}`);
+    if (code !== 0) troubles.push(`${area}: the bench ended with code ${code ?? 'none'}; its figures may be incomplete`);
+  }
+
+  if (!json) for (const line of ['', ...figureTable(figures)]) say(line);
+  for (const trouble of troubles) say(`✗ ${trouble}`);
+  return troubles.length === 0 ? 0 : 1;
+}
+
+/** @param {string} area */
+const fileOf = (area) => path.join(folder, `${area}.ts`);
+
+/** @returns {readonly string[]} */
+function knownAreas() {
+  const files = existsSync(folder) ? readdirSync(folder) : [];
+  const areas = files.filter((name) => /^[^_.][^.]*\.ts$/.test(name)).map((name) => name.slice(0, -3));
+  return [...new Set([...areas, startArea])].sort();
+}
+
+/**
+ * Runs the bench of an area and passes each figure on as it is printed; what else it prints is for the person.
+ *
+ * @param {string} area
+ * @param {Readonly<Record<string, string | undefined>>} env
+ * @param {(figure: Figure) => void} note
+ * @returns {Promise<number | null>} exit code
+ */
+async function measure(area, env, note) {
+  const child = launch(process.execPath, ['--import', 'tsx', fileOf(area)], {
+    cwd: root,
+    env,
+    stdio: ['ignore', 'pipe', 'inherit'],
+  });
+  const forget = stopLater({ stop: () => stopChild(child, 5000), kill: () => signalGroup(child.pid, 'SIGKILL') });
+  const end = ended(child);
+  if (child.stdout !== null) {
+    for await (const line of readline.createInterface({ input: child.stdout })) {
+      const figure = figureIn(line);
+      if (figure === null) say(line);
+      else note(figure);
+    }
+  }
+  const { code } = await end;
+  forget();
+  return code;
+}
