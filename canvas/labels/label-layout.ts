@@ -38,9 +38,14 @@ export function labelLines(part: Part): readonly string[] {
   return more.length === 0 ? [`${part.designator} ${first}`] : [part.designator, first, ...more];
 }
 
+/** The room that a line of a label may take, in drawing units; a little more than it does. */
+export function labelWidth(line: string): number {
+  return line.length * CHARACTER;
+}
+
 function labelSize(part: Part): { readonly width: number; readonly height: number } {
   const lines = labelLines(part);
-  return { width: Math.max(...lines.map(({ length }) => length)) * CHARACTER + 4, height: lines.length * LABEL_LINE };
+  return { width: Math.max(...lines.map(labelWidth)) + 4, height: lines.length * LABEL_LINE };
 }
 
 type Sized = { readonly width: number; readonly height: number };

@@ -101,7 +101,7 @@ export function Drawing({ notes, openNote, onOpenNote, onPinNote }: DrawingProps
 
   useDrawingKeys(gestures.cancel);
   useClipboardEvents();
-  useRevealOnOpen();
+  useFitUntilTouched();
 
   return (
     <div
@@ -290,19 +290,29 @@ function useClipboardEvents(): void {
   }, [commands]);
 }
 
-/** Fits the drawing once, as soon as the surface has a size. */
-function useRevealOnOpen(): void {
+/** Keeps the drawing fitted to its surface from the opening until the person first does something with it. */
+function useFitUntilTouched(): void {
   const commands = useCommands();
   const flowStore = useStoreApi();
-  const fitted = useRef(false);
   useEffect(() => {
+    let size = '';
     const fit = () => {
-      if (fitted.current || flowStore.getState().width === 0 || !flowStore.getState().d3Zoom) return;
-      fitted.current = true;
+      const { width, height, d3Zoom } = flowStore.getState();
+      if (width === 0 || !d3Zoom || size === `${width} ${height}`) return;
+      size = `${width} ${height}`;
       commands.context().screen.zoomToFit();
     };
     fit();
-    return flowStore.subscribe(fit);
+    const unsubscribe = flowStore.subscribe(fit);
+    const touched = new AbortController();
+    const stop = () => {
+      unsubscribe();
+      touched.abort();
+    };
+    for (const event of ['pointerdown', 'keydown', 'wheel'] as const) {
+      window.addEventListener(event, stop, { capture: true, passive: true, signal: touched.signal });
+    }
+    return stop;
   }, [commands, flowStore]);
 }
 

@@ -5,7 +5,7 @@ import type { NodeProps } from 'reactflow';
 import { bodyOf } from '../../document/lookup';
 import type { Part } from '../../document/types';
 import { grow } from '../../geometry/box';
-import { LABEL_LINE, labelLines, type TextBlock } from '../../labels/label-layout';
+import { LABEL_LINE, labelLines, labelWidth, type TextBlock } from '../../labels/label-layout';
 import { marksOf } from '../../network/marks';
 import { useSheet } from '../sheet-context';
 import { nodeBox, type PartNodeData } from './flow-nodes';
@@ -32,7 +32,7 @@ export const PartNodeView = memo(function PartNodeView({ data }: NodeProps<PartN
         <Symbol kind={part.kind} placement={part} />
       </g>
       {label && <Label part={part} block={label} dead={dead} />}
-      {caution !== undefined && <CautionMark part={part} />}
+      {caution !== undefined && <CautionMark part={part} label={label} />}
     </svg>
   );
 });
@@ -94,15 +94,19 @@ function Label({ part, block, dead }: { part: Part; block: TextBlock; dead: bool
   );
 }
 
-/** A triangle with a bar and a dot, at the body's upper left, clear of the leads. */
-function CautionMark({ part }: { part: Part }) {
+/** A triangle with a bar and a dot, at the end of the label's first line, where nothing else is written. */
+function CautionMark({ part, label }: { part: Part; label: TextBlock | null }) {
   const body = bodyOf(part);
-  const x = body.left - part.at.x - 5;
-  const y = body.top - part.at.y - 5;
+  const width = labelWidth(labelLines(part)[0] ?? '');
+  const beside = label && {
+    x: label.at.x + { start: width, middle: width / 2, end: -width }[label.align] + (label.align === 'end' ? -17 : 12),
+    y: label.at.y + LABEL_LINE / 2,
+  };
+  const { x, y } = beside ?? { x: body.left - part.at.x - 8, y: body.top - part.at.y - 8 };
   return (
     <g transform={`translate(${x} ${y})`} className="text-caution">
-      <path d="M0-8L8 6H-8Z" className="fill-paper" stroke="currentColor" strokeWidth={1.5} strokeLinejoin="round" />
-      <path d="M0-3V1.4M0 3.6V3.7" stroke="currentColor" strokeWidth={1.6} strokeLinecap="round" />
+      <path d="M0-7L7.5 6H-7.5Z" className="fill-paper" stroke="currentColor" strokeWidth={1.5} strokeLinejoin="round" />
+      <path d="M0-2.6V1.6M0 3.7V3.8" stroke="currentColor" strokeWidth={1.6} strokeLinecap="round" />
     </g>
   );
 }
