@@ -14,3 +14,15 @@ export const DESIGNATOR = /^[\p{L}][\p{L}\p{N}_.+-]{0,15}$/u;
 
 /** Names of nodes: as designators, and numbers too; `0` is the reference node's own. */
 export const NODE_NAME = /^[\p{L}\p{N}_+-][\p{L}\p{N}_.+-]{0,15}$/u;
+
+/** Whether a node can be given this name. */
+export function isNodeName(name: string): boolean {
+  return name !== '0' && NODE_NAME.test(name);
+}
+
+/** The first free node name: the wanted one, or it with the lowest number from 2. Equal names are one node. */
+export function freeNodeName(wanted: string, taken: ReadonlySet<string>): string {
+  let name = wanted;
+  for (let number = 2; taken.has(name); number += 1) name = `${wanted}${number}`;
+  return name;
+}

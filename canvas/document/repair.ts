@@ -1,14 +1,14 @@
-import { definitionOf } from '../parts/registry';
-import { DESIGNATOR, freeDesignator } from './designators';
+import { definitionOf, initialValues } from '../parts/registry';
+import { DESIGNATOR, freeDesignator, freeNodeName, isNodeName } from './designators';
 import type { Part, SheetDocument, Wire } from './types';
 
 /**
  * Mends what a well-formed document may still have wrong, each by its own named step, so that the rest of the house
- * may rely on it: unique ids, unique designators, every field present and none unknown, wires that end on pins.
- * A document with nothing wrong comes back as it was.
+ * may rely on it: unique ids, unique designators, every field present and none unknown, names that nodes can have,
+ * wires that end on pins. A document with nothing wrong comes back as it was.
  */
 export function repair(document: SheetDocument): SheetDocument {
-  const parts = uniqueDesignators(uniqueById(document.parts).map(completeValues));
+  const parts = uniqueDesignators(nameableNodes(uniqueById(document.parts).map(completeValues)));
   const wires = wiresThatEnd(uniqueById(document.wires), parts);
   return { ...document, parts, wires };
 }
@@ -29,13 +29,26 @@ function completeValues(part: Part): Part {
       const typed = Object.hasOwn(part.values, field.key) ? part.values[field.key] : undefined;
       const known =
         field.type !== 'choice' || field.options.some((option) => option.value === typed) ? typed : undefined;
-      return [field.key, known ?? field.initial];
+      // A name that is missing is found later: the same first name for several would join their nodes.
+      return [field.key, known ?? (field.type === 'nodeName' ? '' : field.initial)];
     }),
   );
   const same =
     Object.keys(part.values).length === fields.length &&
     fields.every((field) => part.values[field.key] === complete[field.key]);
   return same ? part : { ...part, values: complete };
+}
+
+/** Gives a free name where a node's name cannot be one, `0` among them, which is the reference node's own. */
+function nameableNodes(parts: readonly Part[]): readonly Part[] {
+  const names = parts.flatMap(({ kind, values }) => (kind === 'nodeName' ? [values['name'] ?? ''] : []));
+  const taken = new Set(names.filter(isNodeName));
+  return parts.map((part) => {
+    if (part.kind !== 'nodeName' || isNodeName(part.values['name'] ?? '')) return part;
+    const name = freeNodeName(initialValues('nodeName')['name'] ?? 'node', taken);
+    taken.add(name);
+    return { ...part, values: { ...part.values, name } };
+  });
 }
 
 function uniqueDesignators(parts: readonly Part[]): readonly Part[] {
