@@ -16,6 +16,8 @@ export default defineConfig({
         test: {
           name: 'unit',
           environment: 'node',
+          // Property tests run hundreds of cases; on a busy machine the usual 5 seconds are short.
+          testTimeout: 30_000,
           include: ['tests/{solver,reference,canvas,app,scripts,house}/**/*.test.ts'],
         },
       },

@@ -1,19 +1,27 @@
-import { courseOf, partsById, samePin } from '../../document/lookup';
+import { allPins, courseOf, partsById, samePin } from '../../document/lookup';
 import type { PartId, PinRef, SheetDocument, Wire } from '../../document/types';
+import { samePoint } from '../../geometry/point';
 
 /**
  * After wires have gone: of the junctions they ended on, one that joins nothing goes too, and one that is left with
- * two wires heals into a single wire, which keeps its course.
+ * two wires heals into a single wire, which keeps its course. A junction under another pin stays: it is what joins that
+ * pin (a node's name, say) to the wires.
  */
 export function pruneJunctions(document: SheetDocument, touched: ReadonlySet<PartId>): SheetDocument {
   let result = document;
   for (const id of touched) {
     if (partsById(result).get(id)?.kind !== 'junction') continue;
     const ends = result.wires.filter((wire) => wire.from.part === id || wire.to.part === id);
+    if (liesUnderPin(result, id)) continue;
     if (ends.length === 0) result = withoutPart(result, id);
     else if (ends.length === 2) result = heal(result, id, ends);
   }
   return result;
+}
+
+function liesUnderPin(document: SheetDocument, junction: PartId): boolean {
+  const at = partsById(document).get(junction)?.at;
+  return at !== undefined && allPins(document).some((pin) => pin.ref.part !== junction && samePoint(pin.at, at));
 }
 
 function withoutPart(document: SheetDocument, id: PartId): SheetDocument {

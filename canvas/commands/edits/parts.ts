@@ -1,13 +1,13 @@
-import { freeDesignator } from '../../document/designators';
+import { freeDesignator, freeNodeName } from '../../document/designators';
 import { designatorsOf, extentOf } from '../../document/lookup';
 import type { Part, PartId, SheetDocument, Wire } from '../../document/types';
 import { centreOf, unite } from '../../geometry/box';
 import { turnBy, type Placement } from '../../geometry/placement';
-import { add, snap, type Point } from '../../geometry/point';
+import { add, GRID, snap, type Point } from '../../geometry/point';
 import { initialValues, type PartKind } from '../../parts/registry';
 import { pruneJunctions } from './junctions';
 
-/** Puts a new part on the sheet, with the first free designator. */
+/** Puts a new part on the sheet, with the first free designator, and a node name with the first free name. */
 export function addPart(
   document: SheetDocument,
   kind: PartKind,
@@ -21,9 +21,16 @@ export function addPart(
     turn: placement.turn,
     mirrored: placement.mirrored,
     designator: freeDesignator(kind, designatorsOf(document)),
-    values: initialValues(kind),
+    values: kind === 'nodeName' ? unusedName(document) : initialValues(kind),
   };
   return { document: { ...document, parts: [...document.parts, part] }, part };
+}
+
+/** A new node name must not join its node to another that happens to have the first name that is offered. */
+function unusedName(document: SheetDocument): Record<string, string> {
+  const taken = new Set(document.parts.flatMap(({ kind, values }) => (kind === 'nodeName' ? [values['name'] ?? ''] : [])));
+  const values = initialValues('nodeName');
+  return { ...values, name: freeNodeName(values['name'] ?? 'node', taken) };
 }
 
 /**
@@ -81,7 +88,7 @@ function rearrange(
   const only = chosen.length === 1 ? chosen[0] : undefined;
   const around = unite(chosen.map(extentOf));
   if (!around) return document;
-  const centre = only ? only.at : snap(centreOf(around));
+  const centre = only ? only.at : centreOnGrid(centreOf(around));
   const map = (at: Point, part: Part): Rearranged => move({ x: at.x - centre.x, y: at.y - centre.y }, part);
   const sample = chosen[0];
   return {
@@ -96,6 +103,22 @@ function rearrange(
       return { ...wire, corners: wire.corners.map((corner) => add(centre, map(corner, sample).offset)) };
     }),
   };
+}
+
+/**
+ * The centre to turn and mirror about: near the middle, taking grid points to grid points, and the same again after the
+ * turn, so that four turns or two mirrorings bring every part back. Midway both ways is itself such a centre. Midway
+ * one way, one of the two grid points beside it is on the black squares of the board, before the turn and after it.
+ */
+function centreOnGrid(middle: Point): Point {
+  const midwayX = Math.abs(middle.x % GRID) === GRID / 2;
+  const midwayY = Math.abs(middle.y % GRID) === GRID / 2;
+  if (midwayX && midwayY) return middle;
+  const near = snap(middle);
+  const black = (near.x + near.y) % (2 * GRID) === 0;
+  if (midwayX && !black) return { x: near.x - GRID, y: near.y };
+  if (midwayY && !black) return { x: near.x, y: near.y - GRID };
+  return near;
 }
 
 function turnPoint(point: Point, quarterTurns: number): Point {
