@@ -2,6 +2,7 @@ import type { BranchTable } from '../elements/branch-table';
 import { StarMesh } from '../linear/star-mesh';
 import { pathVoltage } from './given-voltages';
 import type { Network } from './network';
+import { polishCurrents } from './polish-currents';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
 
@@ -59,6 +60,7 @@ export class NodalForm {
       readings.iRe[row] = yRe * re - yIm * im;
       readings.iIm[row] = yRe * im + yIm * re;
     }
+    this.polish(branches, readings);
     for (const row of component.innerCurrents) {
       if (component.slotOfRow.has(row)) {
         this.readVoltage(row, readings);
@@ -70,6 +72,19 @@ export class NodalForm {
       }
     }
     return true;
+  }
+
+  private polish(branches: BranchTable, readings: Readings): void {
+    const { component } = this;
+    const slotErrors = this.mesh.boundErrors();
+    const errors = new Map<number, number>();
+    for (const row of component.admittances) {
+      const slot = component.slotOfRow.get(row) ?? -1;
+      const y = Math.abs(branches.yRe[row] ?? 0) + Math.abs(branches.yIm[row] ?? 0);
+      const i = Math.abs(readings.iRe[row] ?? 0) + Math.abs(readings.iIm[row] ?? 0);
+      errors.set(row, slot < 0 ? 0 : y * (slotErrors[slot] ?? 0) + Number.EPSILON * i);
+    }
+    polishCurrents(this.network, this.structure, component, branches, readings, errors);
   }
 
   /**

@@ -37,6 +37,7 @@ export class StarMesh {
   /** For each joining step, the known voltage of its vertex over the one joined to, V; filled in by the caller. */
   readonly eRe: Float64Array;
   readonly eIm: Float64Array;
+  private readonly error: Float64Array;
   private readonly wRe: Float64Array;
   private readonly wIm: Float64Array;
   private readonly inverseRe: Float64Array;
@@ -49,7 +50,7 @@ export class StarMesh {
     const steps = plan.stepVertex.length;
     const neighbours = plan.neighbour.length;
     [this.yRe, this.yIm, this.jRe, this.jIm] = fourOf(slots);
-    [this.dRe, this.dIm] = fourOf(slots);
+    [this.dRe, this.dIm, this.error] = fourOf(slots);
     [this.vRe, this.vIm] = fourOf(plan.vertexCount);
     [this.eRe, this.eIm, this.uRe, this.uIm] = fourOf(steps);
     [this.wRe, this.wIm] = fourOf(neighbours);
@@ -99,6 +100,44 @@ export class StarMesh {
       if ((plan.stepInto[step] ?? -1) < 0) this.putBack(step);
       else this.joinBack(step);
     }
+  }
+
+  /**
+   * How far off each slot's voltage may be by the rounding of `solve`, V: the same recurrences on sizes. A small
+   * voltage between vertices that large ones surround may have come out of cancellation, and this tells.
+   */
+  boundErrors(): Float64Array {
+    const { plan, dRe, dIm, wRe, wIm, error } = this;
+    const { neighbourSlot, target } = plan;
+    error.fill(0);
+    for (const slot of plan.knownSlots) error[slot] = Number.EPSILON * sizeAt(dRe, dIm, slot);
+    for (let step = plan.stepVertex.length - 1; step >= 0; step--) {
+      const start = plan.neighbourStart[step] ?? 0;
+      const end = plan.neighbourStart[step + 1] ?? 0;
+      let pair = plan.targetStart[step] ?? 0;
+      if ((plan.stepInto[step] ?? -1) >= 0) {
+        const given = sizeAt(this.eRe, this.eIm, step);
+        for (let at = start; at < end; at++, pair++) {
+          const to = target[pair] ?? 0;
+          error[neighbourSlot[at] ?? 0] = (error[to] ?? 0) + Number.EPSILON * (sizeAt(dRe, dIm, to) + given);
+        }
+        continue;
+      }
+      const source = ROUNDING * sizeAt(this.uRe, this.uIm, step);
+      for (let at = start; at < end; at++) error[neighbourSlot[at] ?? 0] = source;
+      for (let one = start; one < end; one++) {
+        const weight = sizeAt(wRe, wIm, one);
+        for (let other = one + 1; other < end; other++, pair++) {
+          const slot = target[pair] ?? 0;
+          const off = (error[slot] ?? 0) + ROUNDING * sizeAt(dRe, dIm, slot);
+          const slotOne = neighbourSlot[one] ?? 0;
+          const slotOther = neighbourSlot[other] ?? 0;
+          error[slotOther] = (error[slotOther] ?? 0) + weight * off;
+          error[slotOne] = (error[slotOne] ?? 0) + sizeAt(wRe, wIm, other) * off;
+        }
+      }
+    }
+    return error;
   }
 
   private takeOut(step: number): number {
@@ -284,6 +323,13 @@ export class StarMesh {
       dIm[from] = signFrom * (signTo * (dIm[to] ?? 0) + eIm);
     }
   }
+}
+
+/** A complex product or quotient, and the sum that it goes into, round by some units in the last place. */
+const ROUNDING = 4 * Number.EPSILON;
+
+function sizeAt(re: Float64Array, im: Float64Array, at: number): number {
+  return Math.abs(re[at] ?? 0) + Math.abs(im[at] ?? 0);
 }
 
 function fourOf(size: number): [Float64Array, Float64Array, Float64Array, Float64Array] {

@@ -1,0 +1,106 @@
+import type { BranchTable } from '../elements/branch-table';
+import type { Network } from './network';
+import type { Readings } from './readings';
+import type { Component, Structure } from './structure';
+
+/** Improvements feed on each other along a chain of nodes; after so many rounds what is left is not worth more. */
+const MOST_ROUNDS = 8;
+
+/** A current is replaced only where the current law gives it with this many times less error. */
+const WORTHWHILE = 4;
+
+/**
+ * Gives currents back the digits that cancellation took. A small voltage across a strong element between two nodes of
+ * large voltage may have lost digits, and its current with it; if the other currents at one of its nodes are better
+ * known, Kirchhoff's current law gives it from them.
+ *
+ * `errorOf` gives each admittance's current a bound on its error; only the bounds decide, so a current is never
+ * replaced by a worse one. Nodes with a given voltage are passed over: a current there is itself found by the law.
+ */
+export function polishCurrents(
+  network: Network,
+  structure: Structure,
+  component: Component,
+  branches: BranchTable,
+  readings: Readings,
+  errorOf: ReadonlyMap<number, number>,
+): void {
+  const errors = new Map(errorOf);
+  const around = rowsAround(network, structure, component);
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    let changed = false;
+    for (const [node, rows] of around) {
+      if (improveAt(network, node, rows, branches, readings, errors)) changed = true;
+    }
+    if (!changed) return;
+  }
+}
+
+/** The rows at each node of the component that no given voltage touches; both ends on one node do not count. */
+function rowsAround({ first, second }: Network, structure: Structure, component: Component): Map<number, number[]> {
+  const given = new Set<number>([component.nodes[0] ?? 0]);
+  for (const node of component.nodes) {
+    const parent = structure.parent[node] ?? -1;
+    if (parent < 0) continue;
+    given.add(node);
+    given.add(parent);
+  }
+  const around = new Map<number, number[]>();
+  for (const node of component.nodes) if (!given.has(node)) around.set(node, []);
+  for (const rows of [component.admittances, component.innerCurrents, component.outerCurrents]) {
+    for (const row of rows) {
+      const a = first[row] ?? 0;
+      const b = second[row] ?? 0;
+      if (a === b) continue;
+      around.get(a)?.push(row);
+      around.get(b)?.push(row);
+    }
+  }
+  return around;
+}
+
+/** Replaces the least well known current at a node by what the others leave it, if that is better. */
+function improveAt(
+  { first }: Network,
+  node: number,
+  rows: readonly number[],
+  branches: BranchTable,
+  readings: Readings,
+  errors: Map<number, number>,
+): boolean {
+  let worst = -1;
+  let worstError = 0;
+  let total = 0;
+  for (const row of rows) {
+    const error = errors.get(row) ?? 0;
+    total += error;
+    if (error > worstError) {
+      worst = row;
+      worstError = error;
+    }
+  }
+  if (worst < 0 || worstError <= WORTHWHILE * (total - worstError)) return false;
+  let re = 0;
+  let im = 0;
+  let error = 0;
+  for (const row of rows) {
+    if (row === worst) continue;
+    const isGiven = !errors.has(row);
+    const sign = first[row] === node ? 1 : -1;
+    const iRe = (isGiven ? branches.sRe[row] : readings.iRe[row]) ?? 0;
+    const iIm = (isGiven ? branches.sIm[row] : readings.iIm[row]) ?? 0;
+    re += sign * iRe;
+    im += sign * iIm;
+    error += (errors.get(row) ?? 0) + Number.EPSILON * (Math.abs(iRe) + Math.abs(iIm));
+  }
+  if (WORTHWHILE * error >= worstError) return false;
+  const sign = first[worst] === node ? -1 : 1;
+  const zRe = branches.zRe[worst] ?? 0;
+  const zIm = branches.zIm[worst] ?? 0;
+  readings.iRe[worst] = sign * re;
+  readings.iIm[worst] = sign * im;
+  readings.dRe[worst] = sign * (zRe * re - zIm * im);
+  readings.dIm[worst] = sign * (zRe * im + zIm * re);
+  errors.set(worst, error);
+  return true;
+}
