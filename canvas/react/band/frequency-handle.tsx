@@ -93,7 +93,7 @@ export function FrequencyHandle({ onCancel, ref }: FrequencyHandleProps) {
             )}
           >
             {parked === 'below' && <Arrow points="left" />}
-            {direct ? '0 Hz' : formatHertz(hz)}
+            {formatHertz(hz)}
             {parked === 'above' && <Arrow points="right" />}
             {parked === null && (
               <svg aria-hidden="true" viewBox="0 0 10 5" className="absolute top-full left-1/2 -mt-px h-[5px] w-2.5 -translate-x-1/2 text-ink">

@@ -43,11 +43,8 @@ export function Attention() {
 const Problems = memo(function Problems({ problems }: { readonly problems: readonly SheetProblem[] }) {
   const commands = useCommands();
   return (
-    <section aria-label="Problems" className="border-b border-rule bg-falls/6 px-4 py-2.5">
-      <h2 className="mb-0.5 flex justify-between text-sm font-semibold text-falls">
-        Why it does not solve
-        <span className="text-[13px] font-normal">{plural(problems.length, 'problem')}</span>
-      </h2>
+    <section aria-label="Problems" className="border-b border-rule bg-falls/6 py-2.5 pr-2.5 pl-4">
+      <h2 className="mb-0.5 text-sm font-semibold text-falls">{plural(problems.length, 'problem')}</h2>
       <ul className="max-h-72 overflow-y-auto">
         {problems.map((problem) => {
           const pressable = problem.parts.length + problem.pins.length + problem.wires.length > 0;
@@ -91,7 +88,7 @@ const Cautions = memo(function Cautions({ cautions }: { readonly cautions: reado
   const id = useId();
   const sources = [...new Set(cautions.map(({ source }) => source))];
   return (
-    <section aria-labelledby={`${id}-title`} className="border-b border-rule bg-caution/8 px-4 py-1.5">
+    <section aria-labelledby={`${id}-title`} className="border-b border-rule bg-caution/8 py-1.5 pr-2.5 pl-4">
       <h2>
         <button
           type="button"

@@ -19,7 +19,7 @@ export function LedgerSection({ name, title, aside, children }: LedgerSectionPro
   const folded = useFolded(name);
   const id = useId();
   return (
-    <section aria-labelledby={`${id}-title`} className="border-b border-rule px-4 py-1.5 last:border-b-0">
+    <section aria-labelledby={`${id}-title`} className="border-b border-rule py-1.5 pr-2.5 pl-4 last:border-b-0">
       <h2>
         <button
           type="button"

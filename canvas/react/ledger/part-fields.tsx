@@ -118,7 +118,7 @@ function SourceFrequency({ part, field }: SourceFrequencyProps) {
       </FieldLine>
       {own && (
         <ValueField
-          label="Its own, in Hz or rad/s"
+          label="In Hz or rad/s"
           value={value}
           readOnly={!mayEdit}
           owner={part.designator}

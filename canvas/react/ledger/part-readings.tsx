@@ -43,7 +43,7 @@ export function PartReadings({ part }: { readonly part: Part }) {
         <PowerLines power={power} convention={convention} />
       </dl>
       {current && voltage && <TimeFunctions current={current} voltage={voltage} frequencyHz={frequencyHz} />}
-      <p className="text-[12px] leading-4 text-muted">
+      <p className="text-[12px] leading-4 text-balance text-muted">
         Current enters {entryWords(element.kind)}; a positive <i>P</i> is absorbed.
       </p>
     </div>
@@ -122,7 +122,7 @@ type TimeFunctionsProps = { readonly current: Phasor; readonly voltage: Phasor; 
 
 function TimeFunctions({ current, voltage, frequencyHz }: TimeFunctionsProps) {
   return (
-    <div className="rounded-md bg-sunken py-1 pr-1 pl-2.5">
+    <div className="rounded-md bg-sunken py-1 pr-0.5 pl-2">
       <TimeLine text={timeFunction('i', current, 'A', frequencyHz)} tone="current" copyLabel="Copy i(t) with all digits" />
       <TimeLine text={timeFunction('u', voltage, 'V', frequencyHz)} tone="voltage" copyLabel="Copy u(t) with all digits" />
       {frequencyHz > 0 && <TimeLine text={angularFrequency(frequencyHz)} tone="plain" copyLabel="Copy ω with all digits" />}
@@ -132,8 +132,8 @@ function TimeFunctions({ current, voltage, frequencyHz }: TimeFunctionsProps) {
 
 function TimeLine({ text, tone, copyLabel }: { readonly text: CopiedText; readonly tone: FigureTone; readonly copyLabel: string }) {
   return (
-    <div className="flex min-h-6 items-center gap-1">
-      <span className={classNames('min-w-0 flex-1 font-mono text-[12px] leading-4 tabular-nums', figureTones[tone])}>{text.shown}</span>
+    <div className="flex min-h-6 items-center">
+      <span className={classNames('min-w-0 flex-1 font-mono text-[11.5px] leading-4 tabular-nums', figureTones[tone])}>{text.shown}</span>
       <CopyButton label={copyLabel} text={() => text.full} />
     </div>
   );

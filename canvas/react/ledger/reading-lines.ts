@@ -38,11 +38,17 @@ export function linesOf(
       name: quantity === 'node' && name === '0' ? '0 (reference)' : name,
       // A tenth of a degree cannot be seen in the dial.
       degrees: Math.round(angleDegrees(phasor)),
-      length: largest === 0 ? 0 : Math.round((magnitude(phasor) / largest) * 50) / 50,
+      length: relativeSize(magnitude(phasor), largest),
       first,
       second,
     };
   });
+}
+
+/** Rounded, so that a change too small to be seen draws nothing; but only a reading of zero has no hand at all. */
+function relativeSize(size: number, largest: number): number {
+  if (size === 0) return 0;
+  return Math.max(0.02, Math.round((size / largest) * 50) / 50);
 }
 
 function figuresText(phasor: Phasor, quantity: ReadingQuantity, convention: ReadingConvention): readonly [string, string | null] {

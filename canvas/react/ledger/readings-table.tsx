@@ -102,7 +102,7 @@ function moveFocus(event: KeyboardEvent<HTMLElement>) {
 }
 
 /** Columns: the name takes what is left; figures have their places, whatever they are. */
-const TWO_FIGURES = 'grid grid-cols-[minmax(0,1fr)_94px_78px] items-center';
+const TWO_FIGURES = 'grid grid-cols-[minmax(0,1fr)_86px_86px] items-center';
 const ONE_FIGURE = 'grid grid-cols-[minmax(0,1fr)_auto] items-center';
 
 type HeadRowProps = Pick<ReadingsTableProps, 'quantity' | 'convention' | 'order' | 'onOrder'>;

@@ -58,9 +58,9 @@ function ConventionChip() {
   return (
     <Chip>
       <span>
-        {conventionSentence(conventionAt(convention, frequencyHz))} · <i>f</i>{' '}
-        <span className="text-ink">{formatHertz(frequencyHz)}</span> · <i>ω</i>{' '}
-        <span className="text-ink">{formatAngular(frequencyHz)}</span>
+        {conventionSentence(conventionAt(convention, frequencyHz))} · <i>f</i>
+        <span className="ml-1.5 text-ink">{formatHertz(frequencyHz)}</span> · <i>ω</i>
+        <span className="ml-1 text-ink">{formatAngular(frequencyHz)}</span>
       </span>
     </Chip>
   );

@@ -64,7 +64,7 @@ export function ValueField({
 
   const leave = () => {
     if (changed && fault !== null) {
-      const kept = `“${draft.trim()}” was not taken; ${owner} keeps ${value === '' ? 'none' : value}. ${fault}`;
+      const kept = `“${draft.trim()}” was not taken; ${owner} keeps ${echo?.(value) || value || 'none'}. ${fault}`;
       setRefused(kept);
       store.getState().say(kept);
       setDraft(null);
