@@ -20,6 +20,8 @@ const config = {
   turbopack: { root: import.meta.dirname },
   // A sheet of two million characters, and what quoting adds to it on the way.
   experimental: { serverActions: { bodySizeLimit: '4mb' } },
+  // Development would print every action's arguments: passwords and whole sheets.
+  logging: { serverFunctions: false },
   headers: async () => [{ source: '/:path*', headers: SECURITY_HEADERS }],
 };
 

@@ -1,11 +1,4 @@
-import {
-  BaseError,
-  ConnectionAcquireTimeoutError,
-  ConnectionError,
-  QueryTypes,
-  Sequelize,
-  type Transaction,
-} from 'sequelize';
+import { ConnectionAcquireTimeoutError, ConnectionError, QueryTypes, Sequelize, type Transaction } from 'sequelize';
 import { connectionSettings } from './connection-settings';
 import { mariadbModule } from './mariadb-module';
 
@@ -138,24 +131,4 @@ export function select<Row extends object>(
     database().query<Row>(sql, { type: QueryTypes.SELECT, replacements: { ...replacements }, transaction });
   // Within a transaction a dead connection has taken the transaction with it.
   return transaction ? run() : retrying(run);
-}
-
-/** Whether the database answers a question within three seconds. */
-export async function databaseAnswers(): Promise<boolean> {
-  let timer: NodeJS.Timeout | undefined;
-  const late = new Promise<boolean>((resolve) => {
-    timer = setTimeout(() => resolve(false), 3_000);
-  });
-  const asked = select<{ readonly one: number }>('SELECT 1 AS one', {}).then(
-    () => true,
-    (error: unknown) => {
-      if (error instanceof BaseError) return false;
-      throw error;
-    },
-  );
-  try {
-    return await Promise.race([asked, late]);
-  } finally {
-    clearTimeout(timer);
-  }
 }

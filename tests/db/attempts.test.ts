@@ -61,7 +61,7 @@ describe('attempts', () => {
       script,
     ]);
     expect(stdout.trim()).toBe('false');
-  });
+  }, 120_000);
 
   it('are forgotten, or given back one by one', async () => {
     expect(await allowedOf('d', 5)).toBe(3);

@@ -65,6 +65,18 @@ describe('the demonstration', () => {
       expect(await verifyPassword(passwordHash, accounts.password)).toBe(true);
     }
     expect(new Set(accounts.accounts.map((account) => account.role)).size).toBe(4);
+    const viewer = await viewerOf(accounts.accounts[0]?.email ?? '');
+    const { sheets } = await listSheets(viewer, { search: '', sort: 'name', archived: false });
+    expect(sheets.map((sheet) => sheet.name)).toEqual([
+      '40 kHz transducer match',
+      'Hydrophone anti-alias low-pass',
+      'Hydrophone preamplifier',
+      'Mains inlet filter',
+      'Pump-motor power-factor bank',
+      'Two-way monitor crossover',
+    ]);
+    for (const sheet of sheets) expect(sheet.purpose.length).toBeGreaterThan(80);
+    expect(sheets.filter((sheet) => sheet.snapshotCount > 0 && sheet.openNoteCount > 0)).toHaveLength(1);
   });
 
   it('lays sheets in the order of their files, snapshots and note threads', async () => {

@@ -1,8 +1,9 @@
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import type { Role } from '@/app/_shared/roles';
 import type { Viewer } from '@/app/_shared/wire';
-import { databaseAnswers, inTransaction, isUnavailable, select } from '@/db/client';
+import { inTransaction, isUnavailable, select } from '@/db/client';
 import { connectionSettings } from '@/db/connection-settings';
+import { databaseAnswers } from '@/db/queries/health';
 import { createNote } from '@/db/queries/notes';
 import { createSheet, saveSheet } from '@/db/queries/sheet-changes';
 import { findSheet, listSheets } from '@/db/queries/sheets';

@@ -1,5 +1,5 @@
 import { publicRoute } from '@/app/_server/route';
-import { databaseAnswers } from '@/db/client';
+import { databaseAnswers } from '@/db/queries/health';
 
 /** Whether the server can do its work: for whoever starts it, and for a load balancer. */
 export const GET = publicRoute({ name: 'health' }, async () => {

@@ -37,6 +37,6 @@ export function isRouteFile({ file }: SourceFile): boolean {
 
 /** What a file exports, with the declaration that its wrapper left. */
 export async function doorsOf({ file }: SourceFile): Promise<readonly Door[]> {
-  const module: Record<string, unknown> = await import(/* @vite-ignore */ pathToFileURL(path.join(ROOT, file)).href);
-  return Object.entries(module).map(([name, value]) => ({ file, name, value, declaration: declarationOf(value) }));
+  const exported: Record<string, unknown> = await import(/* @vite-ignore */ pathToFileURL(path.join(ROOT, file)).href);
+  return Object.entries(exported).map(([name, value]) => ({ file, name, value, declaration: declarationOf(value) }));
 }
