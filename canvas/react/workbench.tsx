@@ -1,6 +1,7 @@
 'use client';
 
-import { useRef, type ReactNode } from 'react';
+import { ChevronDown, ChevronUp } from 'lucide-react';
+import { useRef, useState, type ReactNode } from 'react';
 import { ReactFlowProvider } from 'reactflow';
 import 'reactflow/dist/base.css';
 import type { NoteAnchor } from '../document/notes';
@@ -17,6 +18,7 @@ import { StatusLine } from './ledger/status-line';
 import { ScreenContext } from './screen-context';
 import { SheetContext, useSheet } from './sheet-context';
 import { Shelf } from './shelf/shelf';
+import { usePrint } from './use-print';
 
 export type { NotePin };
 
@@ -58,6 +60,8 @@ function Bench({
 }: WorkbenchProps) {
   const surface = useRef<HTMLDivElement>(null);
   const screen = useScreen(store, surface);
+  const [raised, setRaised] = useState(false);
+  usePrint(surface);
   return (
     <ScreenContext.Provider value={screen}>
       <div className="workbench grid h-dvh w-full overflow-hidden bg-paper text-ink">
@@ -75,8 +79,19 @@ function Bench({
             <StatusLine />
           </div>
         </main>
-        <aside aria-label="Ledger" className="workbench-ledger min-h-0 border-l border-rule bg-raised">
-          <Ledger notes={notesSection} />
+        <aside aria-label="Ledger" data-raised={raised} className="workbench-ledger min-h-0 border-l border-rule bg-raised">
+          <button
+            type="button"
+            aria-expanded={raised}
+            onClick={() => setRaised(!raised)}
+            className="workbench-grip h-11 w-full shrink-0 items-center justify-between px-4 text-[14px] font-semibold"
+          >
+            Ledger
+            {raised ? <ChevronDown size={18} aria-hidden="true" /> : <ChevronUp size={18} aria-hidden="true" />}
+          </button>
+          <div className="min-h-0 flex-1 [height:100%]">
+            <Ledger notes={notesSection} />
+          </div>
         </aside>
         <footer aria-label="Band" className="workbench-band min-w-0 border-t border-rule bg-raised">
           <Band />

@@ -40,6 +40,13 @@ export function ReadingOverlay({ gestures }: { gestures: Gestures }) {
     const themes = new MutationObserver(reread);
     themes.observe(document.documentElement, { attributes: true, attributeFilter: ['data-theme', 'class'] });
     scheme.addEventListener('change', reread);
+    // A print is taken at once, without another frame.
+    const onPrint = () => {
+      ink = readInk(element);
+      paint();
+    };
+    window.addEventListener('beforeprint', onPrint);
+    window.addEventListener('afterprint', reread);
     void document.fonts.ready.then(reread);
     let size = '';
     const stops = [
@@ -59,6 +66,8 @@ export function ReadingOverlay({ gestures }: { gestures: Gestures }) {
       cancelAnimationFrame(frame);
       themes.disconnect();
       scheme.removeEventListener('change', reread);
+      window.removeEventListener('beforeprint', onPrint);
+      window.removeEventListener('afterprint', reread);
       for (const stop of stops) stop();
     };
   }, [flow, store, gestures]);
