@@ -26,7 +26,6 @@ export default defineConfig([
       '@typescript-eslint/no-non-null-assertion': 'error',
       '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
-      'import/no-cycle': ['error', { ignoreExternal: true }],
       eqeqeq: 'error',
       'no-console': 'error',
     },
