@@ -16,6 +16,7 @@ export type {
   VoltageSource,
 } from './elements/element-list';
 export { REFERENCE_NODE } from './elements/element-list';
+export { sameFrequency } from './elements/source-value';
 export type { ElementListResult } from './elements/validate-element-list';
 export { validateElementList } from './elements/validate-element-list';
 

@@ -22,6 +22,19 @@ export function setOperatingFrequency(context: CommandContext, text: string, ges
   });
 }
 
+/** The frequency is text of four digits, so it stands this close to a rung, in rungs, and is on it. */
+const ON_RUNG = 0.02;
+
+/**
+ * The next frequency up or down a ladder of equal ratios with a rung at every power of ten, so that a step up and a step
+ * down come back to where they were.
+ * @param decades of a step, less than zero for down
+ */
+function nextRung(hz: number, decades: number): number {
+  const place = Math.log10(hz) / decades;
+  return 10 ** (Math.floor(place + 1 + ON_RUNG) * decades);
+}
+
 function stepFrequency(id: string, name: string, key: string, decades: number): Command {
   return {
     id,
@@ -33,7 +46,10 @@ function stepFrequency(id: string, name: string, key: string, decades: number): 
       const { operatingFrequency, band } = context.document;
       const read = readFrequency(operatingFrequency);
       const hz = read.ok && read.value > 0 ? read.value : band.fromHz;
-      const next = frequencyText(Math.max(1e-3, Math.min(1e12, hz * 10 ** decades)), operatingFrequency);
+      // The rungs are round in the unit that the sheet uses.
+      const scale = /rad/.test(operatingFrequency) ? TWO_PI : 1;
+      const wanted = nextRung(hz * scale, decades) / scale;
+      const next = frequencyText(Math.max(1e-3, Math.min(1e12, wanted)), operatingFrequency);
       setOperatingFrequency(context, next, 'frequency keys');
       context.say(`Operating frequency ${next}.`);
     },

@@ -1,4 +1,4 @@
-import { formatQuantity, solve, type Solution } from '@/solver';
+import { formatQuantity, sameFrequency, solve, type Element, type ElementList, type Solution } from '@/solver';
 import type { PartId, PinRef } from '../document/types';
 import type { Network } from './network';
 
@@ -35,7 +35,7 @@ export type Caution = {
 export const CAUTION_ADVICE =
   'Isolate and prove dead before touching, discharge capacitors through a resistor, work to local codes, and leave mains and stored energy to licensed practice.';
 
-type Total = { acSquared: number; dc: number; unknown: boolean };
+type Total = { acSquared: number; dc: number };
 
 /**
  * Finds dangerous voltages and stored energies. A source of another frequency is dead in the readings but not on the
@@ -51,23 +51,44 @@ export function findCautions(network: Network, frequencyHz: number, atOperating:
 type AtFrequency = { readonly frequencyHz: number; readonly solution: Solution };
 
 function solutionsAtAll(network: Network, frequencyHz: number, atOperating: Solution | null): AtFrequency[] {
-  const frequencies = new Set<number>();
+  const frequencies: number[] = [];
   for (const element of network.list.elements) {
-    if ('value' in element && element.value.rms !== 0) frequencies.add(element.value.frequency ?? frequencyHz);
+    if (!('value' in element) || element.value.rms === 0) continue;
+    const own = element.value.frequency;
+    // Two that differ by rounding alone are one, or what is there would be counted twice.
+    const frequency = own === null || sameFrequency(own, frequencyHz) ? frequencyHz : own;
+    if (!frequencies.some((known) => sameFrequency(known, frequency))) frequencies.push(frequency);
   }
-  return [...frequencies].flatMap((frequency): AtFrequency[] => {
+  const list = fixedFrequencies(network.list, frequencyHz);
+  return frequencies.flatMap((frequency): AtFrequency[] => {
     if (frequency === frequencyHz) return atOperating ? [{ frequencyHz, solution: atOperating }] : [];
-    const answer = solve(network.list, { frequency });
+    const answer = solve(list, { frequency });
     return answer.ok ? [{ frequencyHz: frequency, solution: answer }] : [];
   });
 }
 
+/** A source without a frequency of its own delivers at whichever is solved; here it must not at the others' ones. */
+function fixedFrequencies(list: ElementList, frequencyHz: number): ElementList {
+  const elements = list.elements.map((element): Element => {
+    switch (element.kind) {
+      case 'voltageSource':
+      case 'currentSource':
+        return { ...element, value: { ...element.value, frequency: element.value.frequency ?? frequencyHz } };
+      case 'resistor':
+      case 'capacitor':
+      case 'inductor':
+        return element;
+    }
+  });
+  return { ...list, elements };
+}
+
 function total(solutions: readonly AtFrequency[], voltage: (solution: Solution) => { re: number; im: number } | undefined): Total {
-  const sum: Total = { acSquared: 0, dc: 0, unknown: false };
+  const sum: Total = { acSquared: 0, dc: 0 };
   for (const { frequencyHz, solution } of solutions) {
     const phasor = voltage(solution);
-    if (!phasor) sum.unknown = true;
-    else if (frequencyHz === 0) sum.dc += phasor.re;
+    if (!phasor) continue;
+    if (frequencyHz === 0) sum.dc += phasor.re;
     else sum.acSquared += phasor.re ** 2 + phasor.im ** 2;
   }
   return sum;

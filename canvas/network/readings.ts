@@ -1,4 +1,4 @@
-import { solve, type Problem, type Solution } from '@/solver';
+import { sameFrequency, solve, type Problem, type Solution } from '@/solver';
 import type { PartId, PinRef, SheetDocument, WireId } from '../document/types';
 import { readFrequency } from '../parts/read-values';
 import { findCautions, type Caution } from './cautions';
@@ -127,7 +127,8 @@ function balanceOf(solution: Solution): Balance | null {
 
 function findDeadSources(network: Network, frequencyHz: number): PartId[] {
   return network.list.elements.flatMap((element) => {
-    if (!('value' in element) || element.value.frequency === null || element.value.frequency === frequencyHz) return [];
+    if (!('value' in element) || element.value.frequency === null) return [];
+    if (sameFrequency(element.value.frequency, frequencyHz)) return [];
     const part = network.partOfElement.get(element.id);
     return part === undefined ? [] : [part];
   });

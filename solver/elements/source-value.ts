@@ -23,7 +23,12 @@ export function faultOfSourceValue(fields: UnknownFields): string | undefined {
 /** Whether the source delivers anything at the frequency; one with another frequency of its own is dead there. */
 export function isLive(value: SourceValue, { frequency }: Excitation): boolean {
   if (value.frequency === null) return true;
-  return Math.abs(value.frequency - frequency) <= SAME_FREQUENCY * frequency;
+  return sameFrequency(value.frequency, frequency);
+}
+
+/** Whether two frequencies, in hertz, are the same but for rounding: a source with the one delivers at the other. */
+export function sameFrequency(a: number, b: number): boolean {
+  return Math.abs(a - b) <= SAME_FREQUENCY * b;
 }
 
 /**
