@@ -1,5 +1,7 @@
 // @ts-check
 
+export const diskFull = 'the disk is full; free some space and run this again';
+
 /**
  * Why MariaDB ended, out of what it wrote to its error log: `port` when its port was taken meanwhile (which is tried
  * again with another), otherwise a clause that completes "MariaDB could not be started: …".
@@ -9,22 +11,22 @@
  */
 export function reasonIn(log) {
   if (/Can't start server: Bind on TCP\/IP port|Address already in use/i.test(log)) return { kind: 'port' };
-  if (/No space left on device|Disk is full|Errcode: 28\b|errno:? 28\b|Disk quota exceeded|error number 28\b/i.test(log)) {
-    return { kind: 'other', clause: 'the disk is full; free some space and run this again' };
+  if (/No space left on device|Disk is full|Errcode: 28\b|errno:? 28\b|\berror:? (number )?28\b|Disk quota exceeded/i.test(log)) {
+    return { kind: 'other', clause: diskFull };
   }
   if (/Unable to lock \S*ibdata1|Can't lock aria control file|Could not get an exclusive lock|another .* process/i.test(log)) {
     return { kind: 'other', clause: 'another MariaDB server is using the same data directory; stop that one first' };
   }
-  if (/Permission denied|Errcode: 13\b|errno:? 13\b|Operating system error number 13\b/i.test(log)) {
+  if (/Permission denied|Errcode: 13\b|errno:? 13\b|\berror:? (number )?13\b/i.test(log)) {
     return {
       kind: 'other',
       clause: 'its files belong to another account; run as the account that first started Ohmstead here',
     };
   }
-  const errors = log.split('\n').filter((line) => line.includes('[ERROR]') && !/\[ERROR\] Aborting/.test(line));
-  const last = errors.at(-1);
-  if (last !== undefined) {
-    return { kind: 'other', clause: last.replace(/^.*?\[ERROR\]\s*/, '').replace(/\.?\s*$/, '') };
+  // The first error is the cause; those after it only say what else could not be done then.
+  const first = log.split('\n').find((line) => line.includes('[ERROR]'));
+  if (first !== undefined) {
+    return { kind: 'other', clause: first.replace(/^.*?\[ERROR\]\s*/, '').replace(/\.?\s*$/, '') };
   }
   return { kind: 'other', clause: 'it ended without giving a reason' };
 }

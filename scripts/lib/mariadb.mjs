@@ -1,5 +1,16 @@
 // @ts-check
-import { closeSync, createReadStream, existsSync, mkdirSync, openSync, readdirSync, renameSync, rmSync, writeFileSync } from 'node:fs';
+import {
+  closeSync,
+  createReadStream,
+  existsSync,
+  mkdirSync,
+  openSync,
+  readdirSync,
+  renameSync,
+  rmSync,
+  statfsSync,
+  writeFileSync,
+} from 'node:fs';
 import net from 'node:net';
 import os from 'node:os';
 import path from 'node:path';
@@ -7,7 +18,7 @@ import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { setTimeout as wait } from 'node:timers/promises';
 import { rotate, sizeOf, tailOf } from './logs.mjs';
-import { reasonIn } from './mariadb-log.mjs';
+import { diskFull, reasonIn } from './mariadb-log.mjs';
 import { mariadbServer, systemTableFiles } from './mariadb-programs.mjs';
 import { shown } from './paths.mjs';
 import { freePort, rememberedPort } from './ports.mjs';
@@ -109,6 +120,19 @@ function cannotStart(clause, layout) {
 }
 
 /**
+ * @param {Layout} layout
+ * @param {number} logStart size of the log before the attempt
+ * @returns {ReturnType<typeof reasonIn>}
+ */
+function reasonFor(layout, logStart) {
+  const reason = reasonIn(tailOf(layout.databaseLog, logStart));
+  const { bavail, bsize } = statfsSync(layout.dir);
+  // The log lies on the same disk, and a full one has no room for the line that would say so.
+  const full = bavail * bsize < 4_000_000;
+  return reason.kind === 'other' && full ? { kind: 'other', clause: diskFull } : reason;
+}
+
+/**
  * A server of this data directory whose starter was killed is shutting down by itself, or, where the kernel did not
  * tell it, still runs. It is waited for, then ended; a process number that now belongs to something else is left alone.
  *
@@ -166,7 +190,7 @@ async function makeDataDirectory(server, layout) {
   const { code } = await end;
   if (code !== 0) {
     rmSync(unfinished, { recursive: true, force: true });
-    const reason = reasonIn(tailOf(layout.databaseLog, logStart));
+    const reason = reasonFor(layout, logStart);
     throw cannotStart(reason.kind === 'other' ? reason.clause : 'its port was taken', layout);
   }
   rmSync(layout.data, { recursive: true, force: true });
@@ -275,7 +299,7 @@ async function tryStart(server, layout, port, statements) {
       await stopChild(child, stopGraceMs);
       return { kind: 'other', clause: `it did not answer within ${readyWithinMs / 1000} seconds` };
     }
-    return reasonIn(tailOf(layout.databaseLog, logStart));
+    return reasonFor(layout, logStart);
   } finally {
     forget();
     rmSync(opening, { force: true });

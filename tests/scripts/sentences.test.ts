@@ -28,6 +28,7 @@ describe('the reason in a log of MariaDB', () => {
   it.each([
     ["[ERROR] InnoDB: Operating system error number 28 in a file operation.\n[ERROR] InnoDB: Error number 28 means 'No space left on device'", /disk is full/],
     ["[ERROR] mariadbd: Disk is full writing './mysql/x' (Errcode: 28 \"No space left on device\")", /disk is full/],
+    ['[ERROR] InnoDB: preallocating 33554432 bytes for file ./ib_logfile101 failed with error 28', /disk is full/],
     ['[ERROR] InnoDB: Unable to lock ./ibdata1 error: 11', /another MariaDB server is using the same data directory/],
     ["[ERROR] mariadbd: Can't lock aria control file '/x/aria_log_control' for exclusive use, error: 11", /same data directory/],
     ["[ERROR] mariadbd: File '/x/aria_log.00000001' not found (Errcode: 13 \"Permission denied\")", /another account/],
@@ -36,8 +37,8 @@ describe('the reason in a log of MariaDB', () => {
     expect(reason.kind === 'other' && reason.clause).toMatch(words);
   });
 
-  it('is its last error when it is none of the usual', () => {
-    const log = '2026-01-01 0 [Note] begin\n2026-01-01 0 [ERROR] First.\n2026-01-01 0 [ERROR] Unknown key "x".\n2026-01-01 0 [ERROR] Aborting\n';
+  it('is its first error when it is none of the usual', () => {
+    const log = '2026-01-01 0 [Note] begin\n2026-01-01 0 [ERROR] Unknown key "x".\n2026-01-01 0 [ERROR] Aborting\n';
     expect(reasonIn(log)).toEqual({ kind: 'other', clause: 'Unknown key "x"' });
     expect(reasonIn('')).toEqual({ kind: 'other', clause: 'it ended without giving a reason' });
   });
