@@ -29,6 +29,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['tests/**/*.test.tsx'],
           setupFiles: ['tests/support/jsdom.ts'],
+          testTimeout: 30_000,
         },
       },
       {

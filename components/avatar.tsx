@@ -39,7 +39,8 @@ export function initials(name: string): string {
 }
 
 function ringOf(name: string): number {
-  let sum = 0;
-  for (const character of name) sum = (sum * 31 + (character.codePointAt(0) ?? 0)) % 9973;
-  return sum % RINGS.length;
+  // FNV-1a, so that names that differ little still part.
+  let hash = 0x811c9dc5;
+  for (const character of name) hash = Math.imul(hash ^ (character.codePointAt(0) ?? 0), 0x01000193) >>> 0;
+  return hash % RINGS.length;
 }

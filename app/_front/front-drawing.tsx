@@ -5,11 +5,11 @@ import { formatPolar } from '@/solver';
 type Place = { readonly x: number; readonly y: number };
 
 const LABELS: Readonly<Record<FrontPart, Place & { readonly value: string; readonly anchor: 'middle' | 'start' }>> = {
-  R1: { x: 150, y: 68, value: '600 Ω', anchor: 'middle' },
-  C1: { x: 254, y: 172, value: '82.0 nF', anchor: 'start' },
-  L1: { x: 340, y: 66, value: '60.0 mH', anchor: 'middle' },
-  C2: { x: 474, y: 172, value: '82.0 nF', anchor: 'start' },
-  R2: { x: 668, y: 172, value: '600 Ω', anchor: 'start' },
+  R1: { x: 150, y: 68, value: '600\u2009Ω', anchor: 'middle' },
+  C1: { x: 254, y: 172, value: '82.0\u2009nF', anchor: 'start' },
+  L1: { x: 340, y: 66, value: '60.0\u2009mH', anchor: 'middle' },
+  C2: { x: 474, y: 172, value: '82.0\u2009nF', anchor: 'start' },
+  R2: { x: 668, y: 172, value: '600\u2009Ω', anchor: 'start' },
 };
 /** Where the dial of a current stands; its text follows it. */
 const CURRENTS: Readonly<Record<FrontPart, Place>> = {
@@ -29,7 +29,7 @@ export function FrontDrawing({ readings, label }: { readonly readings: FrontRead
   const largestCurrent = largestOf(Object.values(readings.currents));
   const largestVoltage = largestOf(Object.values(readings.voltages));
   return (
-    <svg viewBox="0 6 800 322" role="img" aria-label={label} className="block h-auto w-full">
+    <svg viewBox="22 6 800 322" role="img" aria-label={label} className="block h-auto w-full">
       <Network />
       {PARTS.map((part) => {
         const { x, y, value, anchor } = LABELS[part];
@@ -92,14 +92,14 @@ function Network() {
         ))}
         <circle cx="340" cy="270" r="4" />
       </g>
-      <text x="98" y="164" className="fill-muted font-mono text-[14px]">
+      <text x="94" y="152" className="fill-muted font-mono text-[15px] max-sm:hidden">
         +
       </text>
       <text x="98" y="186" className="fill-ink text-[15px] font-semibold max-sm:text-[22px]">
         VS1
       </text>
       <text x="98" y="204" className="fill-muted font-mono text-[13px] max-sm:hidden">
-        1.00 V
+        1.00{'\u2009'}V
       </text>
     </>
   );

@@ -35,7 +35,7 @@ export function PasswordForm({ email }: { readonly email: string }) {
 
   return (
     <form method="post" noValidate onSubmit={(event) => void submit(event)} className="flex max-w-90 flex-col gap-1">
-      <input type="hidden" name="username" autoComplete="username" value={email} readOnly />
+      <input name="username" autoComplete="username" value={email} readOnly className="hidden" />
       <PasswordField
         {...register('current')}
         label="Present password"
@@ -51,7 +51,7 @@ export function PasswordForm({ email }: { readonly email: string }) {
         error={formState.errors.next?.message}
         reserveLine
       />
-      <div className="mt-1">
+      <div className="mt-3">
         <Button type="submit" variant="primary" busy={formState.isSubmitting}>
           Change the password
         </Button>

@@ -1,7 +1,10 @@
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterEach } from 'vitest';
 
 afterEach(cleanup);
+
+// A busy machine is slow, not wrong: what is waited for is given the time, and comes at once where there is any.
+configure({ asyncUtilTimeout: 10_000 });
 
 // jsdom has no layout, and so no observer of it; components only need the constructor.
 class SilentResizeObserver implements ResizeObserver {

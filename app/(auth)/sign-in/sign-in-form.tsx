@@ -4,7 +4,7 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { z } from 'zod';
-import { FormRefusal } from '../form-refusal';
+import { FormFoot } from '../form-foot';
 import { loadPage } from '@/app/_client/load-page';
 import { signInWithPassword } from '@/app/_client/session';
 import { emailSchema } from '@/app/_shared/wire';
@@ -61,18 +61,18 @@ export function SignInForm({ next, refusal: firstRefusal }: SignInFormProps) {
         error={formState.errors.email?.message}
         reserveLine
       />
-      <PasswordField
-        {...register('password')}
-        label="Password"
-        autoComplete="current-password"
-        controlSize="large"
-        error={formState.errors.password?.message}
-        reserveLine
-      />
+      <FormFoot refusal={refusal}>
+        <PasswordField
+          {...register('password')}
+          label="Password"
+          autoComplete="current-password"
+          controlSize="large"
+          error={formState.errors.password?.message}
+        />
+      </FormFoot>
       <Button type="submit" variant="primary" size="large" busy={formState.isSubmitting || leaving}>
         {formState.isSubmitting || leaving ? 'Signing in' : 'Sign in'}
       </Button>
-      <FormRefusal>{refusal}</FormRefusal>
     </form>
   );
 }

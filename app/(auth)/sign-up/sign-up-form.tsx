@@ -4,7 +4,7 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { signUp } from '../actions';
-import { FormRefusal } from '../form-refusal';
+import { FormFoot } from '../form-foot';
 import { attempt } from '@/app/_client/attempt';
 import { loadPage } from '@/app/_client/load-page';
 import { failureText } from '@/app/_client/say-failure';
@@ -75,19 +75,19 @@ export function SignUpForm({ next }: { readonly next: string }) {
         error={formState.errors.email?.message}
         reserveLine
       />
-      <PasswordField
-        {...register('password')}
-        label="Password"
-        autoComplete="new-password"
-        controlSize="large"
-        hint="At least 10 characters."
-        error={formState.errors.password?.message}
-        reserveLine
-      />
-      <Button type="submit" variant="primary" size="large" busy={busy} className="mt-1">
+      <FormFoot refusal={refusal}>
+        <PasswordField
+          {...register('password')}
+          label="Password"
+          autoComplete="new-password"
+          controlSize="large"
+          hint={refusal === undefined ? 'At least 10 characters.' : undefined}
+          error={formState.errors.password?.message}
+        />
+      </FormFoot>
+      <Button type="submit" variant="primary" size="large" busy={busy}>
         {busy ? 'Making the account' : 'Make the account'}
       </Button>
-      <FormRefusal>{refusal}</FormRefusal>
     </form>
   );
 }

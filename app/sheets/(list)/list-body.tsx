@@ -105,7 +105,7 @@ export function ListBody({ state, query, may, onBegin, onImport, onShowAll }: Li
         <>
           <div
             aria-hidden="true"
-            className={classNames(rowGrid, 'py-0! pb-1.5! text-xs text-muted max-lg:hidden')}
+            className={classNames(rowGrid, '-mx-2 py-0! pb-1.5! text-xs text-muted max-lg:hidden')}
           >
             <span>Sheet</span>
             {COLUMNS.map((label) => (
@@ -122,7 +122,7 @@ export function ListBody({ state, query, may, onBegin, onImport, onShowAll }: Li
             aria-label={query.archived ? 'Archived sheets' : 'Sheets'}
             aria-busy={waiting}
             onKeyDown={onKeyDown}
-            className={classNames('max-lg:border-t max-lg:border-rule', waiting && 'opacity-70')}
+            className={classNames('-mx-2 max-lg:border-t max-lg:border-rule', waiting && 'opacity-70')}
           >
             {sheets.map((sheet) => (
               <SheetRow key={sheet.id} sheet={sheet} may={may} actions={actions} renaming={renaming === sheet.id} />

@@ -51,9 +51,11 @@ export function ListToolbar({ query, onChange }: ListToolbarProps) {
         }}
         lead={<Search size={16} strokeWidth={1.75} aria-hidden="true" />}
         trail={
-          <span className="pointer-events-none pr-1.5 max-sm:hidden">
-            <Kbd>/</Kbd>
-          </span>
+          query.search === '' && (
+            <span className="pointer-events-none pr-1.5 max-sm:hidden">
+              <Kbd>/</Kbd>
+            </span>
+          )
         }
         className="min-w-0 basis-full sm:max-w-90 sm:flex-1 sm:basis-auto"
       />

@@ -19,7 +19,7 @@ export default function SheetsLoading() {
         <Skeleton className="h-9 flex-1 sm:max-w-80" />
         <Skeleton className="h-9 w-36" />
       </div>
-      <div aria-hidden="true" className="border-t border-rule lg:mt-8">
+      <div aria-hidden="true" className="-mx-2 border-t border-rule lg:mt-8">
         {ROWS.map((width, index) => (
           <div key={index} className={rowGrid}>
             <div className="flex h-[45px] flex-col justify-center gap-2">

@@ -34,7 +34,7 @@ export function SheetRow({ sheet, may, actions, renaming }: SheetRowProps) {
   const href = `/sheets/${sheet.id}`;
   const ahead = (): void => router.prefetch(href);
   return (
-    <li className={classNames(rowGrid, 'group hover:bg-wash has-[[data-sheet-link]:focus-visible]:bg-wash')}>
+    <li className={classNames(rowGrid, 'hover:bg-wash has-[[data-sheet-link]:focus-visible]:outline-2 has-[[data-sheet-link]:focus-visible]:-outline-offset-2 has-[[data-sheet-link]:focus-visible]:outline-voltage')}>
       <div className="min-w-0">
         {renaming ? (
           <RenameField
@@ -50,7 +50,8 @@ export function SheetRow({ sheet, may, actions, renaming }: SheetRowProps) {
             onPointerEnter={ahead}
             onFocus={ahead}
             data-sheet-link={sheet.id}
-            className="block truncate rounded-sm text-[15px] leading-6 font-semibold outline-offset-3 after:absolute after:inset-0"
+            // The row shows the focus, as the row is what a press opens.
+            className="block truncate text-[15px] leading-6 font-semibold outline-none after:absolute after:inset-0"
           >
             {sheet.name}
           </Link>

@@ -115,7 +115,9 @@ export function useSheetList(query: ListSheetsInput, first: { readonly query: Li
     [refresh],
   );
 
-  return { list: data, failure: error, waiting: isLoading, refresh, rename, archive, restore, clone };
+  // SWR calls it loading while only what the page came with is shown; but that is the answer to its query.
+  const waiting = isLoading && path !== listPath(first.query);
+  return { list: data, failure: error, waiting, refresh, rename, archive, restore, clone };
 }
 
 function withSheets(list: SheetList, change: (sheets: readonly SheetListItem[]) => readonly SheetListItem[]): SheetList {
