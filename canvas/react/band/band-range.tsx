@@ -54,7 +54,7 @@ function BandRangeForm({ onDone }: { readonly onDone: () => void }) {
     const { document, apply } = store.getState();
     const isSame = next.fromHz === document.band.fromHz && next.toHz === document.band.toHz;
     const words = `${endText(next.fromHz)} to ${endText(next.toHz)}`;
-    if (!isSame) apply({ label: `Set the Band to ${words}`, document: { ...document, band: next }, say: `The Band runs from ${words}.` });
+    if (!isSame) apply({ label: `Set the Band from ${words}`, document: { ...document, band: next }, say: `The Band runs from ${words}.` });
     onDone();
   };
   const submit = (event: FormEvent) => {

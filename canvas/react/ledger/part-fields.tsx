@@ -41,7 +41,9 @@ function PartField({ part, field, main = false }: PartFieldProps) {
   const value = part.values[field.key] ?? '';
   const what = part.designator === '' ? 'the node name' : part.designator;
   const commit = (text: string, shown: string) => {
-    const label = main ? `Set ${what} to ${shown}` : `Set ${field.label.toLowerCase()} of ${what} to ${shown}`;
+    // “Set VS1 to sine” says it; a phase needs its name.
+    const saysItself = main || field.type === 'choice';
+    const label = saysItself ? `Set ${what} to ${shown}` : `Set ${field.label.toLowerCase()} of ${what} to ${shown}`;
     commitValues(store, part.id, { [field.key]: text }, label);
   };
   switch (field.type) {
