@@ -1,5 +1,5 @@
 import { render } from '@testing-library/react';
-import userEvent from '@testing-library/user-event';
+import userEvent, { PointerEventsCheckLevel } from '@testing-library/user-event';
 import type { ReactNode } from 'react';
 import { TooltipProvider } from '@/components/tooltip';
 import type { Screen } from '@/canvas/commands/command';
@@ -48,8 +48,8 @@ export function openRoom(document: SheetDocument, content: ReactNode, mayEdit = 
   );
   return {
     store,
-    // No pause between keys: nothing here waits for one.
-    user: userEvent.setup({ delay: null }),
+    // No pause between keys, and no asking for styles that jsdom would have to work out: neither is tested here.
+    user: userEvent.setup({ delay: null, pointerEventsCheck: PointerEventsCheckLevel.Never }),
     revealed,
     copied,
     steps: () => store.getState().history.past.map(({ label }) => label),
