@@ -9,7 +9,10 @@ afterEach(() => {
   vi.useRealTimers();
 });
 
-const pass = (milliseconds: number): void => act(() => vi.advanceTimersByTime(milliseconds));
+const pass = (milliseconds: number): void =>
+  act(() => {
+    vi.advanceTimersByTime(milliseconds);
+  });
 
 test('a value that goes on changing is given out once it has rested', () => {
   const { result, rerender } = renderHook(({ value }) => useDebounced(value, 180), { initialProps: { value: '' } });

@@ -11,7 +11,10 @@ afterEach(() => {
   vi.useRealTimers();
 });
 
-const pass = (milliseconds: number): void => act(() => vi.advanceTimersByTime(milliseconds));
+const pass = (milliseconds: number): void =>
+  act(() => {
+    vi.advanceTimersByTime(milliseconds);
+  });
 const region = (): HTMLElement => screen.getByRole('region', { name: 'Messages' });
 
 test('the region that is read aloud is there before its first words', () => {
