@@ -442,8 +442,6 @@ export class Keeper {
       this.step({ type: 'saved', revision: outcome.revision, atMs });
     }
     if (isSaved(this.keeping)) this.drop();
-    // The draft is made from the new revision now, and must say so.
-    else void this.keep();
   }
 
   private endIfDone(): void {

@@ -62,9 +62,14 @@ export function lockLease(name: string, events: LeaseEvents): Lease {
     };
     // The platform takes either of the two, not both.
     const options: LockOptions = steal ? { steal: true } : { signal: mine.signal };
-    navigator.locks.request(name, options, hold).catch(() => {
-      // Rejects when another tab took the lock by force, or when this request was withdrawn.
-      if (!held || ended) return;
+    navigator.locks.request(name, options, hold).catch((error: unknown) => {
+      if (ended) return;
+      if (!held) {
+        // Withdrawn by ourselves, or the browser has locks and refuses them here: then the sheet opens without.
+        if (!(error instanceof DOMException && error.name === 'AbortError')) events.granted(true);
+        return;
+      }
+      // Another tab took the lock by force.
       release = null;
       events.lost();
       request(false);

@@ -6,6 +6,7 @@ import { fetchResult } from '@/app/_client/fetch-result';
 import type { SheetRecord } from '@/app/_shared/wire';
 import { saveSheet } from '@/app/sheets/[id]/actions';
 import type { SheetStore } from '@/canvas/store/sheet-store';
+import { keepLooks } from '../keep-looks';
 import { openDraftBox } from './drafts';
 import { Keeper, type KeeperView } from './keeper';
 import { leaseOf } from './lease';
@@ -21,9 +22,16 @@ export type KeeperOptions = {
 /** Whether a pointer is pressed anywhere: a drag computes from the document it began with. */
 let pressed = false;
 
+/** A part of what the keeper knows: something that is equal as long as it says the same. */
+export function useKept<T>(keeper: Keeper, select: (view: KeeperView) => T): T {
+  const read = () => select(keeper.getView());
+  return useSyncExternalStore(keeper.subscribe, read, read);
+}
+
 /** The keeper of an open sheet, tied to the sheet's store and to the page's life. */
-export function useKeeper({ store, sheet, userId, mayWrite }: KeeperOptions): readonly [Keeper, KeeperView] {
+export function useKeeper({ store, sheet, userId, mayWrite }: KeeperOptions): Keeper {
   const [keeper] = useState(() => {
+    let given = store.getState().document;
     return new Keeper({
       userId,
       sheetId: sheet.id,
@@ -36,7 +44,12 @@ export function useKeeper({ store, sheet, userId, mayWrite }: KeeperOptions): re
       lease: (events) => leaseOf(userId, sheet.id, events),
       isOutdated: unstable_isUnrecognizedActionError,
       document: () => store.getState().document,
-      show: (document) => store.getState().replace(document),
+      show: (next) => {
+        const { document, selection, replace, select } = store.getState();
+        replace(mayWrite ? next : keepLooks(next, document, given));
+        select(selection);
+        given = next;
+      },
       isQuiet: () => !pressed && store.getState().editing === null && store.getState().tool.kind === 'select',
       now: () => performance.now(),
     });
@@ -86,6 +99,5 @@ export function useKeeper({ store, sheet, userId, mayWrite }: KeeperOptions): re
     };
   }, [keeper, store]);
 
-  const view = useSyncExternalStore(keeper.subscribe, keeper.getView, keeper.getView);
-  return [keeper, view];
+  return keeper;
 }
