@@ -102,6 +102,10 @@ export function Drawing({ notes, openNote, onOpenNote, onPinNote }: DrawingProps
   useDrawingKeys(gestures.cancel);
   useClipboardEvents();
   useFitUntilTouched();
+  useEffect(() => {
+    // The drawing is what one comes for: its keys work from the start, unless something else was focused already.
+    if (document.activeElement === document.body) frame.current?.focus({ preventScroll: true });
+  }, []);
 
   return (
     <div
@@ -230,10 +234,10 @@ function useDrawingKeys(cancelGesture: () => boolean): void {
       }
       // The clipboard has events of its own, which need no permission.
       if (['mod+c', 'mod+x', 'mod+v'].includes(keyName(event))) return;
+      // Keys without Ctrl or ⌘ belong to the drawing, so that dictation and other controls never set them off
+      // (WCAG 2.1.4). Escape steps back from anywhere.
       const inDrawing = event.target instanceof Element && event.target.closest('[data-drawing]') !== null;
-      const onControl = event.target instanceof Element && event.target.closest('button, a, summary, [role="slider"], table') !== null;
-      const needsDrawing = ['Enter', ' ', 'Tab'].includes(event.key) || event.key.startsWith('Arrow');
-      if (onControl && !inDrawing && needsDrawing) return;
+      if (!inDrawing && !event.ctrlKey && !event.metaKey && event.key !== 'Escape') return;
       const command = commandFor(event, commands.context());
       if (!command) return;
       event.preventDefault();

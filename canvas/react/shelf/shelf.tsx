@@ -44,6 +44,7 @@ function WireButton() {
       onClick={() => {
         const now = commands.context();
         now.setTool(wiring ? { kind: 'select' } : { kind: 'wire', from: null, corners: [] });
+        focusDrawing();
       }}
       className={tile(wiring)}
     >
@@ -55,6 +56,11 @@ function WireButton() {
       <span>Wire</span>
     </button>
   );
+}
+
+/** Keys go to the drawing again, where what was taken from the Shelf is to be put. */
+function focusDrawing(): void {
+  document.querySelector<HTMLElement>('[data-drawing]')?.focus({ preventScroll: true });
 }
 
 function tile(active: boolean): string {
@@ -83,7 +89,7 @@ function Group({ group, held }: { group: ShelfGroup; held: PartKind | null }) {
           className="fade-in z-40 w-72 rounded-lg border border-rule bg-raised p-1.5 shadow-lg"
           onCloseAutoFocus={(event) => {
             event.preventDefault();
-            document.querySelector<HTMLElement>('[data-drawing]')?.focus({ preventScroll: true });
+            focusDrawing();
           }}
         >
           {kinds.map((kind) => (
