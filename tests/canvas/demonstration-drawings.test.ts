@@ -5,6 +5,7 @@ import { writeSheetFile } from '@/canvas/document/export-file';
 import type { SheetDocument } from '@/canvas/document/types';
 import { overlap, type Box } from '@/canvas/geometry/box';
 import { samePoint, snap, type Point } from '@/canvas/geometry/point';
+import { layOutLabels } from '@/canvas/labels/label-layout';
 import { openPins, meetingPlaces } from '@/canvas/network/marks';
 import { findNodes } from '@/canvas/network/nodes';
 import { readNetwork } from '@/canvas/network/readings';
@@ -107,6 +108,17 @@ describe.each(drawn)('the drawing of %s', (_name, document) => {
       }),
     );
     expect(found).toEqual([]);
+  });
+
+  it('leaves room beside each standing part for its label and its reading', () => {
+    const showing = { currents: true, voltages: false, powers: false, nodes: true };
+    const { labels, readings } = layOutLabels(document, findNodes(document), showing, document.convention.form);
+    for (const part of document.parts) {
+      if (part.turn !== 90 || definitionOf(part.kind).pins.length < 2) continue;
+      expect([part.designator, readings.get(part.id)?.align]).toEqual([part.designator, 'start']);
+      if (part.kind === 'voltageSource' || part.kind === 'currentSource') continue;
+      expect([part.designator, labels.get(part.id)?.align]).toEqual([part.designator, 'start']);
+    }
   });
 
   it('leaves no pin open, and wherever three meet there is a junction', () => {
