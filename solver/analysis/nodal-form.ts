@@ -1,4 +1,5 @@
 import type { BranchTable } from '../elements/branch-table';
+import { planElimination } from '../linear/elimination-plan';
 import { StarMesh } from '../linear/star-mesh';
 import { pathVoltage } from './given-voltages';
 import type { Network } from './network';
@@ -6,8 +7,15 @@ import { polishCurrents } from './polish-currents';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
 
+/** A pivot that is at least this part of its terms costs little more than a digit; other orders are not looked for. */
+const STRONG_PIVOT = 0.05;
+
 /** Below this, a pivot is what cancellation has left of its terms, and mostly rounding error. */
 const TRUSTED_PIVOT = 1e-10;
+
+/** Orders of elimination that are tried, and that are kept. */
+const MOST_ORDERS = 6;
+const MOST_KEPT = 16;
 
 /** Above this, the network is so near to having no unique solution that the branch form is to look at it. */
 const TRUSTED_AMPLIFICATION = 1e7;
@@ -21,7 +29,10 @@ const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
 export class NodalForm {
   /** What `amplification` found at the last frequency; undefined where it was not trusted. */
   condition: number | undefined;
-  private readonly mesh: StarMesh;
+  /** The work space of the usual order of elimination, and that of the order that did at the last frequency. */
+  private readonly usual: StarMesh;
+  private mesh: StarMesh;
+  private readonly others = new Map<string, StarMesh>();
   private readonly scratch = { re: 0, im: 0 };
 
   constructor(
@@ -29,7 +40,8 @@ export class NodalForm {
     private readonly structure: Structure,
     private readonly component: Component,
   ) {
-    this.mesh = new StarMesh(component.plan);
+    this.usual = new StarMesh(component.plan);
+    this.mesh = this.usual;
   }
 
   /**
@@ -37,10 +49,10 @@ export class NodalForm {
    * voltages, unless the work cannot be trusted; says whether it can.
    */
   solve(branches: BranchTable, readings: Readings): boolean {
-    const { mesh, component } = this;
-    this.loadAdmittances(branches);
+    const { component } = this;
     this.condition = undefined;
-    if (mesh.factor() < TRUSTED_PIVOT) return false;
+    if (!this.factor(branches)) return false;
+    const { mesh } = this;
     const amplification = this.amplification(branches);
     if (!(amplification < TRUSTED_AMPLIFICATION)) return false;
     this.condition = amplification;
@@ -72,6 +84,49 @@ export class NodalForm {
       }
     }
     return true;
+  }
+
+  /**
+   * Factors, and leaves the work space that did best in `mesh`. A vertex whose pivot cancels (the middle of an inductor
+   * and a capacitor near their resonance) is put off until others are gone, and then has another pivot. Of the orders
+   * tried the one with the strongest weakest pivot is taken.
+   */
+  private factor(branches: BranchTable): boolean {
+    const postponed = new Set<number>();
+    let best = this.usual;
+    let bestRatio = -1;
+    let last = best;
+    for (let attempt = 0; attempt < MOST_ORDERS; attempt++) {
+      last = this.meshFor(postponed);
+      const ratio = this.factorIn(last, branches);
+      if (ratio > bestRatio) {
+        best = last;
+        bestRatio = ratio;
+      }
+      if (ratio >= STRONG_PIVOT || postponed.has(last.weakest)) break;
+      postponed.add(last.weakest);
+    }
+    if (bestRatio < TRUSTED_PIVOT) return false;
+    if (best !== last) this.factorIn(best, branches);
+    this.mesh = best;
+    return true;
+  }
+
+  private factorIn(mesh: StarMesh, branches: BranchTable): number {
+    this.mesh = mesh;
+    this.loadAdmittances(branches);
+    return mesh.factor();
+  }
+
+  /** The work space of an order, kept for other frequencies. The slots of elements have the same numbers in every order. */
+  private meshFor(postponed: ReadonlySet<number>): StarMesh {
+    if (postponed.size === 0) return this.usual;
+    const key = [...postponed].join(' ');
+    const known = this.others.get(key);
+    if (known !== undefined) return known;
+    const mesh = new StarMesh(planElimination({ ...this.component.graph, postponed: new Set(postponed) }));
+    if (this.others.size < MOST_KEPT) this.others.set(key, mesh);
+    return mesh;
   }
 
   private polish(branches: BranchTable, readings: Readings): void {
@@ -130,7 +185,7 @@ export class NodalForm {
 
   private loadSources(branches: BranchTable): void {
     const { mesh, component, scratch } = this;
-    const { plan } = component;
+    const { plan } = mesh;
     mesh.clearSources();
     for (const rows of [component.innerCurrents, component.outerCurrents]) {
       for (const row of rows) {

@@ -1,7 +1,7 @@
 import type { BranchTable } from '../elements/branch-table';
 import { ADMITTANCE, GIVEN_CURRENT, GIVEN_VOLTAGE } from '../elements/branch-table';
 import { DisjointSets } from '../linear/disjoint-sets';
-import type { EliminationPlan } from '../linear/elimination-plan';
+import type { EliminationPlan, PlanGraph } from '../linear/elimination-plan';
 import { planElimination } from '../linear/elimination-plan';
 import type { Network } from './network';
 import { REFERENCE } from './network';
@@ -26,7 +26,8 @@ export interface Component {
   readonly innerCurrents: readonly number[];
   /** Rows of given current (open circuits too) with just one end in it. */
   readonly outerCurrents: readonly number[];
-  /** How its nodal equations are solved. */
+  /** Its nodal equations as a graph, and how they are solved. */
+  readonly graph: PlanGraph;
   readonly plan: EliminationPlan;
   /**
    * For each admittance and each given current but those of zero: its slot, or −1 where its ends are one vertex (see
@@ -138,15 +139,17 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
       const size = Math.hypot(branches.yRe[row] ?? 0, branches.yIm[row] ?? 0);
       for (const node of ends(row)) weight[vertexOf[node] ?? 0] = (weight[vertexOf[node] ?? 0] ?? 0) + size;
     }
-    const plan = planElimination({
+    const graph: PlanGraph = {
       vertexCount: representatives.length,
       group: Int32Array.from(representatives, (node) => grouped.find(node)),
       root: vertexOf[root] ?? 0,
       weight,
+      postponed: new Set(),
       pairs,
-    });
+    };
+    const plan = planElimination(graph);
     const slotOfRow = new Map(inSlots.map((row) => [row, slotOfPairRow(plan, pairOfRow.get(row))]));
-    return { index, nodes, grounded: grounded.has(index), ...mine, plan, slotOfRow };
+    return { index, nodes, grounded: grounded.has(index), ...mine, graph, plan, slotOfRow };
   });
 
   return {

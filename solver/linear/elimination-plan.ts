@@ -12,6 +12,8 @@ export interface PlanGraph {
   readonly root: number;
   /** How strongly each vertex is tied to others, in any measure: of a group, the strongest keeps its place longest. */
   readonly weight: Float64Array;
+  /** Vertices to be eliminated after all others that are single, because their pivot cancels before that. */
+  readonly postponed: ReadonlySet<number>;
   /** Pairs of different vertices that are connected, as [low, high]; repeats are allowed. */
   readonly pairs: readonly (readonly [number, number])[];
 }
@@ -72,11 +74,11 @@ class Slots {
  * doi 10.1109/PROC.1967.6011), of equal degrees the lowest number. Vertices of their own go first; groups are then
  * joined to one vertex each, as late as possible, because a difference of two large known voltages loses nothing while
  * their vertices are still apart, and to the one most strongly tied, because the small voltage across a strong tie
- * would otherwise come out as a difference of large ones; then these go by degree too. All that is left is the root's
- * group.
+ * would otherwise come out as a difference of large ones; postponed vertices come next, and then what the groups were
+ * joined to. All that is left is the root's group.
  */
 export function planElimination(graph: PlanGraph): EliminationPlan {
-  const { vertexCount, group, root, weight, pairs } = graph;
+  const { vertexCount, group, root, weight, postponed, pairs } = graph;
   const slots = new Slots(vertexCount);
   const slotOfPair = Int32Array.from(pairs, ([one, other]) => slots.get(one, other));
   const rootGroup = group[root] ?? -1;
@@ -139,11 +141,12 @@ export function planElimination(graph: PlanGraph): EliminationPlan {
   };
 
   const single = new Set<number>();
+  const late = new Set<number>();
   const representative = new Map<number, number>();
   for (let vertex = 0; vertex < vertexCount; vertex++) {
     const of = group[vertex] ?? vertex;
     if (of === rootGroup) continue;
-    if (groupSize.get(of) === 1) single.add(vertex);
+    if (groupSize.get(of) === 1) (postponed.has(vertex) ? late : single).add(vertex);
     else if ((weight[vertex] ?? 0) > (weight[representative.get(of) ?? -1] ?? -1)) representative.set(of, vertex);
   }
   byDegree(single);
@@ -151,6 +154,7 @@ export function planElimination(graph: PlanGraph): EliminationPlan {
     const into = representative.get(group[vertex] ?? -1);
     if (into !== undefined && into !== vertex) join(vertex, into);
   }
+  byDegree(late);
   byDegree(new Set(representative.values()));
 
   const knownSlots: number[] = [];

@@ -37,6 +37,8 @@ export class StarMesh {
   /** For each joining step, the known voltage of its vertex over the one joined to, V; filled in by the caller. */
   readonly eRe: Float64Array;
   readonly eIm: Float64Array;
+  /** The vertex of the weakest pivot that `factor` met; −1 where there was none to take. */
+  weakest = -1;
   private readonly error: Float64Array;
   private readonly wRe: Float64Array;
   private readonly wIm: Float64Array;
@@ -71,22 +73,25 @@ export class StarMesh {
 
   /**
    * Takes all vertices out of the admittances. Answers the smallest size of a pivot against the sum of the sizes of
-   * its terms: near 0, what is left of it after cancellation is rounding error; 0 at once when a pivot is zero or not
-   * finite, and then nothing may be solved.
+   * its terms, of which cancellation has taken the rest: of so many digits the solution may be short. 0 where a pivot
+   * is zero or not finite, and nothing may be solved then. `weakest` is the vertex of that pivot.
    */
   factor(): number {
     const { plan } = this;
-    let smallest = 1;
+    let smallest = Infinity;
+    this.weakest = -1;
     for (let step = 0; step < plan.stepVertex.length; step++) {
-      if ((plan.stepInto[step] ?? -1) < 0) {
-        const ratio = this.takeOut(step);
-        if (!(ratio > 0)) return 0;
-        if (ratio < smallest) smallest = ratio;
-      } else {
+      if ((plan.stepInto[step] ?? -1) >= 0) {
         this.joinAdmittances(step);
+        continue;
       }
+      const ratio = this.takeOut(step);
+      if (ratio >= smallest) continue;
+      smallest = ratio > 0 ? ratio : 0;
+      this.weakest = plan.stepVertex[step] ?? -1;
+      if (smallest === 0) return 0;
     }
-    return smallest;
+    return Math.min(1, smallest);
   }
 
   /** Finds all voltages for the sources and known voltages that stand there; the admittances' factors are kept. */
@@ -140,6 +145,7 @@ export class StarMesh {
     return error;
   }
 
+  /** Answers the size of the pivot against the sum of the sizes of its terms. */
   private takeOut(step: number): number {
     const { plan, yRe, yIm, wRe, wIm } = this;
     const { neighbourSlot, target } = plan;

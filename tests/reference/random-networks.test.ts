@@ -16,6 +16,8 @@ interface Recipe {
   readonly decades: number;
   readonly floatingSource: boolean;
   readonly currentSource: boolean;
+  /** An inductor and a capacitor in series that cancel but for this part of them, so that the node between has no pivot. */
+  readonly trap?: { readonly detuning: number };
 }
 
 const FREQUENCY = 1000;
@@ -46,6 +48,11 @@ function build(random: Random, recipe: Recipe): Element[] {
   }
   if (recipe.currentSource) {
     elements.push(currentSource('I1', String(random.whole(0, nodes - 1)), String(nodes), 10 ** random.between(-3, 3), random.between(-180, 180)));
+  }
+  if (recipe.trap !== undefined) {
+    const reactance = 10 ** random.between(-recipe.decades, recipe.decades);
+    const [a, b] = [random.whole(1, nodes - 1), nodes];
+    elements.push(inductor('Lt', String(a), 't', reactance / OMEGA), capacitor('Ct', 't', String(b), (1 + recipe.trap.detuning) / (reactance * OMEGA)));
   }
   return elements;
 }
@@ -103,4 +110,15 @@ describe('random networks against 64 digits', () => {
     expect(worst.voltage).toBeLessThanOrEqual(50);
     expect(worst.current).toBeLessThanOrEqual(50);
   }, PATIENCE);
+
+  it.each([0, 1e-12, 1e-9, 1e-6])(
+    'has both right to 20·ε·(1 + condition) where a node’s admittances cancel but for a part of %d',
+    (detuning) => {
+      const recipe = { decades: 2, floatingSource: false, currentSource: false, trap: { detuning } };
+      const worst = worstErrors({ ...recipe, seeds: [401, 410] });
+      expect(worst.voltage).toBeLessThanOrEqual(20);
+      expect(worst.current).toBeLessThanOrEqual(20);
+    },
+    PATIENCE,
+  );
 });

@@ -7,7 +7,7 @@ import type { Element, ElementList } from '@/solver';
  * (1975) 504) with 64-digit numbers of mathjs, and for every output the condition Σ|p/H·∂H/∂p| over all element and
  * source values by the adjoint (Director and Rohrer, IEEE Trans. CT-16 (1969) 318). Shares nothing with the solver.
  */
-const math = create(all, { number: 'BigNumber', precision: 64 });
+const math = create(all ?? {}, { number: 'BigNumber', precision: 64 });
 
 interface Big {
   readonly re: BigNumber;
