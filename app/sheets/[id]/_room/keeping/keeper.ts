@@ -51,6 +51,8 @@ const KEEP_EVERY_MS = 150;
 const KEEP_AGAIN_MS = 2_000;
 /** A storage that does not open within this does not hold up the drawing. */
 const STORAGE_PATIENCE_MS = 2_000;
+/** After this the sheet opens as the page has it; the server judges every save by its revision anyway. */
+const FETCH_PATIENCE_MS = 5_000;
 const SETTLE_PATIENCE_MS = 10_000;
 const MOST_MARKS = 64;
 
@@ -109,7 +111,7 @@ export class Keeper {
     }
     const run = (this.run += 1);
     this.lease = this.ports.lease({
-      granted: (waited) => void this.begin(waited || run > 1, run),
+      granted: (waited) => void this.begin(waited, run),
       waiting: () => this.step({ type: 'hand', hand: 'elsewhere', atMs: this.ports.now() }),
       wanted: async () => {
         this.flush();
@@ -290,9 +292,10 @@ export class Keeper {
   /** This tab writes from now on: looks what the server has and what this machine holds, and goes on from there. */
   private async begin(waited: boolean, run: number): Promise<void> {
     const { userId, sheetId } = this.ports;
+    if (this.keeping.hand === 'elsewhere') this.step({ type: 'hand', hand: 'opening', atMs: this.ports.now() });
     const box = await this.openBox();
     const stale = waited || (newestSeen.get(sheetId) ?? 0) > this.standing.revision;
-    const fresh = stale ? await this.ports.fetchStanding() : null;
+    const fresh = stale ? await soon(this.ports.fetchStanding(), FETCH_PATIENCE_MS) : null;
     if (fresh !== null && fresh.revision >= this.standing.revision) this.standing = fresh;
     const draft = box === null ? null : await soon(box.read(userId, sheetId), STORAGE_PATIENCE_MS);
     const set = box === null ? null : await soon(box.read(userId, aside(sheetId)), STORAGE_PATIENCE_MS);

@@ -22,7 +22,7 @@ export type Lease = {
 };
 
 /** A reload hands over within this; longer means that another tab really holds it. */
-const QUIET_MS = 400;
+const QUIET_MS = 1_000;
 /** For bringing a save to its end. A tab that the browser has frozen will never answer. */
 const ANSWER_MS = 4_000;
 

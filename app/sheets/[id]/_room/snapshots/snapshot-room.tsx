@@ -2,7 +2,7 @@
 
 import Link from 'next/link';
 import { useRouter } from 'next/navigation';
-import { useState, type ReactNode } from 'react';
+import { useState, useSyncExternalStore, type ReactNode } from 'react';
 import { attempt } from '@/app/_client/attempt';
 import { fetchResult, ReadFailure } from '@/app/_client/fetch-result';
 import { failureText } from '@/app/_client/say-failure';
@@ -186,11 +186,18 @@ function SnapshotHead({
   );
 }
 
-/** The exact moment, for a record; in the reader's time zone, which the server does not know. */
+const noChange = () => () => {};
+
+/** The exact moment, for a record: in the reader's time zone, and in UTC as long as only the server has spoken. */
 function Moment({ at }: { readonly at: string }) {
-  return (
-    <time dateTime={at} suppressHydrationWarning>
-      {new Date(at).toLocaleString('en-GB', { dateStyle: 'medium', timeStyle: 'short' })}
-    </time>
+  const text = useSyncExternalStore(
+    noChange,
+    () => momentText(at),
+    () => `${momentText(at, 'UTC')} UTC`,
   );
+  return <time dateTime={at}>{text}</time>;
+}
+
+function momentText(at: string, timeZone?: string): string {
+  return new Date(at).toLocaleString('en-GB', { dateStyle: 'medium', timeStyle: 'short', timeZone });
 }
