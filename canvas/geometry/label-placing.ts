@@ -15,7 +15,7 @@ export function placeBlocks(
   obstacles: readonly Box[],
   mayHide: (id: string) => boolean = () => false,
 ): ReadonlyMap<string, Box> {
-  const taken = [...obstacles];
+  const taken = new BoxIndex(obstacles);
   const placed = new Map<string, Box>();
   for (const { id, candidates } of blocks) {
     let best: Box | null = null;
@@ -30,14 +30,48 @@ export function placeBlocks(
     }
     if (!best || (bestCovered > 0 && mayHide(id))) continue;
     placed.set(id, best);
-    taken.push(best);
+    taken.add(best);
   }
   return placed;
 }
 
-function coveredArea(box: Box, taken: readonly Box[], enough: number): number {
+/** Side of an index cell: about the width of a reading, so that a block looks into few cells and a cell holds few. */
+const CELL = 120;
+
+/** Boxes by the cells of a coarse grid that they touch: what could cover a block is found without asking all. */
+class BoxIndex {
+  private readonly cells = new Map<string, Box[]>();
+
+  constructor(boxes: readonly Box[]) {
+    for (const box of boxes) this.add(box);
+  }
+
+  add(box: Box): void {
+    forEachCell(box, (cell) => {
+      const there = this.cells.get(cell);
+      if (there) there.push(box);
+      else this.cells.set(cell, [box]);
+    });
+  }
+
+  near(box: Box): Set<Box> {
+    const found = new Set<Box>();
+    forEachCell(box, (cell) => {
+      for (const other of this.cells.get(cell) ?? []) found.add(other);
+    });
+    return found;
+  }
+}
+
+function forEachCell(box: Box, visit: (cell: string) => void): void {
+  for (let x = Math.floor(box.left / CELL); x <= Math.floor(box.right / CELL); x += 1) {
+    for (let y = Math.floor(box.top / CELL); y <= Math.floor(box.bottom / CELL); y += 1) visit(`${x},${y}`);
+  }
+}
+
+function coveredArea(box: Box, taken: BoxIndex, enough: number): number {
   let area = 0;
-  for (const other of taken) {
+  for (const other of taken.near(box)) {
     if (!overlap(box, other)) continue;
     const width = Math.min(box.right, other.right) - Math.max(box.left, other.left);
     const height = Math.min(box.bottom, other.bottom) - Math.max(box.top, other.top);

@@ -31,8 +31,18 @@ const GAP = 10;
 /** The reference mark, node names and junctions carry no label of their own beside them. */
 const MARK_KINDS: ReadonlySet<Part['kind']> = new Set(['reference', 'nodeName', 'junction']);
 
+const linesOf = new WeakMap<Part, readonly string[]>();
+
 /** The lines beside a part: its designator and value, or for a source, the lines of its description. */
 export function labelLines(part: Part): readonly string[] {
+  const known = linesOf.get(part);
+  if (known) return known;
+  const made = writeLines(part);
+  linesOf.set(part, made);
+  return made;
+}
+
+function writeLines(part: Part): readonly string[] {
   if (MARK_KINDS.has(part.kind)) return [];
   const [first = '', ...more] = definitionOf(part.kind).describe(part.values).split('\n');
   return more.length === 0 ? [`${part.designator} ${first}`] : [part.designator, first, ...more];

@@ -6,9 +6,17 @@ export type ReadNumber = { readonly ok: true; readonly value: number } | { reado
 
 export const TWO_PI = 2 * Math.PI;
 
-/** Reads a field that holds a quantity. */
+const known = new WeakMap<PartValues, Map<string, ReadNumber>>();
+
+/** Reads a field that holds a quantity. Values never change, so each is read once, however often the network is built. */
 export function readQuantity(values: PartValues, key: string, unit: Unit): ReadNumber {
-  return parseQuantity(values[key] ?? '', unit);
+  const ofPart = known.get(values) ?? new Map<string, ReadNumber>();
+  const before = ofPart.get(key);
+  if (before) return before;
+  const read = parseQuantity(values[key] ?? '', unit);
+  ofPart.set(key, read);
+  known.set(values, ofPart);
+  return read;
 }
 
 /**
