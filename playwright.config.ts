@@ -13,7 +13,9 @@ export default defineConfig({
   // The web server, MariaDB and a browser want a core each; on two cores a second browser would time others out.
   workers: Math.max(1, Math.floor(os.availableParallelism() / 2)),
   retries: 0,
-  timeout: 60_000,
+  timeout: 120_000,
+  // Patience costs nothing when a page is in time; on a busy machine a page that comes late is not a page that fails.
+  expect: { timeout: 15_000 },
   reporter: [['list'], ['json', { outputFile: process.env.PLAYWRIGHT_JSON_OUTPUT_NAME ?? `${state}/playwright.json` }]],
   use: {
     baseURL: process.env.BASE_URL ?? 'http://localhost:3000',

@@ -112,5 +112,5 @@ async function expectCurrent({ drawing, band }: Room, filter: LowPass): Promise<
   await expect(async () => {
     const said = /current (\S+\s\S+ ∠ [^,]+)/.exec(await drawing.words('R1'))?.[1] ?? '';
     expectPolar(said, currentOf(filter, hertz), `current of R1 at ${hertz} Hz`);
-  }).toPass({ timeout: 5_000 });
+  }).toPass({ timeout: 15_000 });
 }

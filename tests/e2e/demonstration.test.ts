@@ -1,4 +1,4 @@
-import demonstration from '@/db/seeds/accounts.json';
+import demonstration from '@/db/seeds/accounts.json' with { type: 'json' };
 import { Room } from './support/room';
 import { signIn } from './support/session';
 import { SheetList } from './support/sheet-list';

@@ -29,7 +29,7 @@ export class Ledger {
   /** Holds a reading of the table to a computed value, to every digit that is shown. */
   async expectReading(quantity: Quantity, name: string, expected: Polar): Promise<void> {
     await this.show(quantity);
-    await expect(async () => expectPolar(await this.reading(name), expected, `${quantity} of ${name}`)).toPass({ timeout: 5_000 });
+    await expect(async () => expectPolar(await this.reading(name), expected, `${quantity} of ${name}`)).toPass({ timeout: 15_000 });
   }
 
   /** The field of the selected part. */

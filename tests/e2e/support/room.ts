@@ -32,6 +32,8 @@ export class Room {
   async ready(): Promise<void> {
     await expect(this.drawing.surface).toBeVisible();
     await listening(this.drawing.surface);
+    // As long as it is being found out who writes here, the sheet takes no hand.
+    await expect(this.page.locator('[inert] [data-drawing]')).toHaveCount(0);
   }
 
   get id(): string {
