@@ -5,7 +5,6 @@ import { fontVariables } from './fonts';
 import './globals.css';
 import { parseTheme, THEME_COOKIE, themeAttribute } from '@/components/theme';
 import { Toaster } from '@/components/toaster';
-import { TooltipProvider } from '@/components/tooltip';
 
 // The content security policy signs every script by a nonce of the request; a page made beforehand would carry none.
 export const dynamic = 'force-dynamic';
@@ -30,7 +29,7 @@ export default async function RootLayout({ children }: { readonly children: Reac
   return (
     <html lang="en" data-theme={themeAttribute(theme)} className={fontVariables}>
       <body className="bg-paper text-ink antialiased">
-        <TooltipProvider>{children}</TooltipProvider>
+        {children}
         <Toaster />
       </body>
     </html>

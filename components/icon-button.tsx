@@ -18,7 +18,7 @@ export type IconButtonProps = Omit<ButtonHTMLAttributes<HTMLButtonElement>, 'ari
   readonly ref?: Ref<HTMLButtonElement>;
 };
 
-/** A button of one icon. Needs a `TooltipProvider` above it. */
+/** A button of one icon. */
 export function IconButton({
   label,
   icon,

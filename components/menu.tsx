@@ -29,6 +29,8 @@ export function Menu({ trigger, label, entries, align = 'end', side = 'bottom', 
       <Primitive.Portal>
         <Primitive.Content
           aria-label={label}
+          // Else it would be named by the trigger, which may be only the place that it is laid out by.
+          aria-labelledby={undefined}
           align={align}
           side={side}
           sideOffset={4}

@@ -1,5 +1,5 @@
-import Link from 'next/link';
 import type { ReactNode } from 'react';
+import { AheadLink } from './ahead-link';
 import { classNames } from '@/components/class-names';
 import { Logo } from '@/components/logo';
 import { Masthead } from '@/components/masthead';
@@ -23,9 +23,9 @@ export type HouseMastheadProps = {
 export function HouseMasthead({ room, teamName, actions }: HouseMastheadProps) {
   return (
     <Masthead className="sticky top-0 z-20" actions={actions ?? <Skeleton className="size-[26px] rounded-full" />}>
-      <Link href="/sheets" aria-label="Ohmstead: all sheets" className="-m-1 flex shrink-0 rounded-md p-1 text-ink">
+      <AheadLink href="/sheets" aria-label="Ohmstead: all sheets" className="-m-1 flex shrink-0 rounded-md p-1 text-ink">
         <Logo size={28} />
-      </Link>
+      </AheadLink>
       {teamName === undefined ? (
         <Skeleton className="hidden h-4 w-32 sm:block" />
       ) : (
@@ -33,7 +33,7 @@ export function HouseMasthead({ room, teamName, actions }: HouseMastheadProps) {
       )}
       <nav aria-label="Main" className="flex h-full items-stretch sm:ml-3">
         {ROOMS.map((one) => (
-          <Link
+          <AheadLink
             key={one.room}
             href={one.href}
             aria-current={one.room === room ? 'page' : undefined}
@@ -45,7 +45,7 @@ export function HouseMasthead({ room, teamName, actions }: HouseMastheadProps) {
             )}
           >
             {one.label}
-          </Link>
+          </AheadLink>
         ))}
       </nav>
     </Masthead>

@@ -15,9 +15,11 @@ export type MessagePageProps = {
 export function MessagePage({ picture, title, children, action, small }: MessagePageProps) {
   return (
     <div className="grid-paper flex min-h-dvh flex-col items-center px-5 pt-[max(5vh,1.5rem)] pb-10">
-      <Link href="/" className="rounded-md p-1">
-        <Wordmark />
-      </Link>
+      <header>
+        <Link href="/" className="inline-block rounded-md p-1">
+          <Wordmark />
+        </Link>
+      </header>
       <main className="flex w-full max-w-[560px] flex-1 flex-col items-center justify-center pb-[8vh] text-center">
         {picture !== undefined && <div className="mb-7">{picture}</div>}
         <h1 className="text-[26px] leading-8 font-semibold tracking-[-0.015em] text-balance">{title}</h1>

@@ -3,7 +3,7 @@
 import { LogOut, UserRound } from 'lucide-react';
 import { leave } from './leave';
 import { Avatar } from '@/components/avatar';
-import { Menu } from '@/components/menu';
+import { MenuButton } from '@/components/menu-button';
 import { applyTheme, parseTheme, THEME_LABELS, THEMES, type Theme } from '@/components/theme';
 import { useTheme } from '@/components/use-theme';
 
@@ -13,17 +13,9 @@ export type PersonMenuProps = { readonly name: string; readonly email: string; r
 export function PersonMenu({ name, email, theme }: PersonMenuProps) {
   const chosen = useTheme(theme);
   return (
-    <Menu
-      label={name}
-      trigger={
-        <button
-          type="button"
-          aria-label={`Signed in as ${name}`}
-          className="flex size-9 cursor-pointer items-center justify-center rounded-full hover:bg-wash data-[state=open]:bg-wash"
-        >
-          <Avatar name={name} decorative />
-        </button>
-      }
+    <MenuButton
+      label={`Signed in as ${name}`}
+      className="flex size-9 cursor-pointer items-center justify-center rounded-full hover:bg-wash data-[state=open]:bg-wash"
       entries={[
         { kind: 'heading', label: email },
         { kind: 'link', label: 'Account', href: '/account', icon: <UserRound size={16} strokeWidth={1.75} aria-hidden="true" /> },
@@ -43,6 +35,8 @@ export function PersonMenu({ name, email, theme }: PersonMenuProps) {
           onSelect: () => void leave(),
         },
       ]}
-    />
+    >
+      <Avatar name={name} decorative />
+    </MenuButton>
   );
 }

@@ -9,7 +9,6 @@ import type { ListPermissions, SheetList } from '@/app/sheets/(list)/list-query'
 import { SheetListView } from '@/app/sheets/(list)/sheet-list-view';
 import { currentToasts, toast } from '@/components/toast';
 import { Toaster } from '@/components/toaster';
-import { TooltipProvider } from '@/components/tooltip';
 
 const router = { push: vi.fn(), prefetch: vi.fn() };
 vi.mock('next/navigation', () => ({ useRouter: () => router }));
@@ -81,9 +80,7 @@ function show(may: ListPermissions = EVERYTHING, sheets: readonly SheetListItem[
   const user = userEvent.setup();
   render(
     <SWRConfig value={{ provider: () => new Map(), dedupingInterval: 0 }}>
-      <TooltipProvider>
-        <SheetListView first={{ sheets, more: false }} may={may} />
-      </TooltipProvider>
+      <SheetListView first={{ sheets, more: false }} may={may} />
       <Toaster />
     </SWRConfig>,
   );
@@ -234,7 +231,7 @@ describe('the row’s menu', () => {
     });
     const user = show();
     await user.click(screen.getByRole('button', { name: `Actions for ${MATCH.name}` }));
-    await user.click(screen.getByRole('menuitem', { name: 'Clone' }));
+    await user.click(await screen.findByRole('menuitem', { name: 'Clone' }));
     await user.click(await screen.findByRole('button', { name: 'Open' }));
     expect(router.push).toHaveBeenCalledWith('/sheets/clone0000001');
     expect(rowNames()).toContain('Transducer match (clone)');
@@ -254,7 +251,7 @@ describe('the row’s menu', () => {
     expect(screen.queryByRole('button', { name: 'New sheet' })).toBeNull();
     expect(screen.queryByRole('button', { name: 'Import' })).toBeNull();
     await user.click(screen.getByRole('button', { name: `Actions for ${MATCH.name}` }));
-    expect(screen.getAllByRole('menuitem').map((item) => item.textContent)).toEqual(['Export as a file']);
+    expect((await screen.findAllByRole('menuitem')).map((item) => item.textContent)).toEqual(['Export as a file']);
     await user.keyboard('{Escape}');
     link(MATCH.name).focus();
     await user.keyboard('{F2}{Delete}');

@@ -8,7 +8,6 @@ import { changeRole, removeMember } from '@/app/team/actions';
 import { TeamView } from '@/app/team/team-view';
 import { currentToasts, toast } from '@/components/toast';
 import { Toaster } from '@/components/toaster';
-import { TooltipProvider } from '@/components/tooltip';
 
 const router = { refresh: vi.fn() };
 vi.mock('next/navigation', () => ({ useRouter: () => router }));
@@ -41,9 +40,7 @@ function show(may = { changeRole: true, removeMember: true }) {
   const user = userEvent.setup();
   render(
     <SWRConfig value={{ provider: () => new Map(), dedupingInterval: 0 }}>
-      <TooltipProvider>
-        <TeamView first={onServer} may={may} />
-      </TooltipProvider>
+      <TeamView first={onServer} may={may} />
       <Toaster />
     </SWRConfig>,
   );

@@ -1,15 +1,14 @@
 'use client';
 
 import { Archive, ArchiveRestore, Copy, Download, EllipsisVertical, PencilLine } from 'lucide-react';
-import Link from 'next/link';
-import { useRouter } from 'next/navigation';
 import { useState, type ReactNode } from 'react';
 import type { ListPermissions } from './list-query';
 import { RenameField } from './rename-field';
 import { rowGrid } from './row-grid';
+import { AheadLink } from '@/app/_frame/ahead-link';
 import type { SheetListItem } from '@/app/_shared/wire';
 import { classNames } from '@/components/class-names';
-import { Menu } from '@/components/menu';
+import { MenuButton } from '@/components/menu-button';
 import type { MenuEntry } from '@/components/menu-entry';
 import { RelativeTime } from '@/components/relative-time';
 
@@ -30,9 +29,7 @@ export type SheetRowProps = {
 };
 
 export function SheetRow({ sheet, may, actions, renaming }: SheetRowProps) {
-  const router = useRouter();
   const href = `/sheets/${sheet.id}`;
-  const ahead = (): void => router.prefetch(href);
   return (
     <li className={classNames(rowGrid, 'hover:bg-wash has-[[data-sheet-link]:focus-visible]:outline-2 has-[[data-sheet-link]:focus-visible]:-outline-offset-2 has-[[data-sheet-link]:focus-visible]:outline-voltage')}>
       <div className="min-w-0">
@@ -43,30 +40,25 @@ export function SheetRow({ sheet, may, actions, renaming }: SheetRowProps) {
             onCancel={() => actions.onRenameCancelled(sheet)}
           />
         ) : (
-          <Link
+          <AheadLink
             href={href}
-            // A long list would ask for every sheet at once; the one under the hand is asked for ahead.
-            prefetch={false}
-            onPointerEnter={ahead}
-            onFocus={ahead}
             data-sheet-link={sheet.id}
             // The row shows the focus, as the row is what a press opens.
             className="block truncate text-[15px] leading-6 font-semibold outline-none after:absolute after:inset-0"
           >
             {sheet.name}
-          </Link>
+          </AheadLink>
         )}
         {sheet.purpose !== '' && <p className="truncate text-[13px] leading-5 text-muted">{firstLine(sheet.purpose)}</p>}
         {sheet.origin !== null && (
           <p className="truncate text-[13px] leading-5 text-muted">
             from{' '}
-            <Link
+            <AheadLink
               href={`/sheets/${sheet.origin.sheetId}`}
-              prefetch={false}
               className="relative z-10 inline-block min-h-6 text-voltage underline decoration-voltage/40 underline-offset-2 hover:decoration-voltage"
             >
               {sheet.origin.sheetName}
-            </Link>
+            </AheadLink>
             {sheet.origin.snapshotName !== null && `, snapshot “${sheet.origin.snapshotName}”`}
           </p>
         )}
@@ -171,7 +163,7 @@ function RowMenu({ sheet, may, actions }: Omit<SheetRowProps, 'renaming'>) {
   if (entries.length === 0) return null;
   return (
     <div className="relative z-10 max-lg:col-start-2 max-lg:row-start-1 max-lg:self-start">
-      <Menu
+      <MenuButton
         label={`Actions for ${sheet.name}`}
         entries={entries}
         onCloseFocus={(event) => {
@@ -180,16 +172,10 @@ function RowMenu({ sheet, may, actions }: Omit<SheetRowProps, 'renaming'>) {
           event.preventDefault();
           actions.onRename(sheet);
         }}
-        trigger={
-          <button
-            type="button"
-            aria-label={`Actions for ${sheet.name}`}
-            className="flex size-9 cursor-pointer items-center justify-center rounded-md text-muted hover:bg-wash hover:text-ink data-[state=open]:bg-wash data-[state=open]:text-ink"
-          >
-            <EllipsisVertical size={18} strokeWidth={1.75} aria-hidden="true" />
-          </button>
-        }
-      />
+        className="flex size-9 cursor-pointer items-center justify-center rounded-md text-muted hover:bg-wash hover:text-ink data-[state=open]:bg-wash data-[state=open]:text-ink"
+      >
+        <EllipsisVertical size={18} strokeWidth={1.75} aria-hidden="true" />
+      </MenuButton>
     </div>
   );
 }
