@@ -6,6 +6,7 @@ import type { Network } from './network';
 import { REFERENCE, toNetwork } from './network';
 import { NodalForm } from './nodal-form';
 import type { Problem } from './problem';
+import { silenceQuietBlocks } from './quiet-blocks';
 import { Readings } from './readings';
 import { checkComponent, solveComponent } from './solve-component';
 import type { Component, Structure } from './structure';
@@ -60,6 +61,7 @@ export class Engine {
       return outcome.solved;
     });
     this.setGivenCurrents(structure, hasNoWayOn);
+    silenceQuietBlocks(network, branches, readings);
     readings.vKnown[REFERENCE] = 1;
     return problems;
   }
