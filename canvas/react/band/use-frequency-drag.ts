@@ -52,7 +52,8 @@ export function useFrequencyDrag(frame: RefObject<HTMLElement | null>): Frequenc
         const box = frame.current?.getBoundingClientRect();
         if (!box || box.width === 0 || event.button !== 0 || drag.current) return;
         const { document, readings } = store.getState();
-        const onHandle = event.target instanceof Element && event.target.closest('[data-frequency-handle]') !== null;
+        const pressed = event.target instanceof Element ? event.target.closest('[data-frequency-handle]') : null;
+        const onHandle = pressed !== null;
         const gesture = `drag the frequency ${event.timeStamp}`;
         const share = onHandle ? handlePlace(document.band, readings.frequencyHz).share : (event.clientX - box.left) / box.width;
         drag.current = {
@@ -63,7 +64,8 @@ export function useFrequencyDrag(frame: RefObject<HTMLElement | null>): Frequenc
           startText: document.operatingFrequency,
           moved: !onHandle,
         };
-        event.currentTarget.setPointerCapture?.(event.pointerId);
+        // Who holds the pointer also gets the clicks: the handle has to, or a double click would never reach it.
+        (pressed ?? event.currentTarget).setPointerCapture?.(event.pointerId);
         if (!onHandle) moveTo(share, gesture);
       },
       onPointerMove(event) {

@@ -61,6 +61,18 @@ describe('dragging the handle', () => {
     expect(room.steps()).toEqual([]);
   });
 
+  it('lets the handle hold the pointer, or a double click on it would be the axis’s', () => {
+    // jsdom has no pointer capture of its own.
+    const holders: Element[] = [];
+    HTMLElement.prototype.setPointerCapture = function hold(this: HTMLElement) {
+      holders.push(this);
+    };
+    openBand();
+    pointer('pointerDown', handle(), 300);
+    expect(holders).toEqual([handle()]);
+    Reflect.deleteProperty(HTMLElement.prototype, 'setPointerCapture');
+  });
+
   it('goes back to where it began on Escape', () => {
     const room = openBand();
     pointer('pointerDown', handle(), 300);

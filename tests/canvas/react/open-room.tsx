@@ -1,7 +1,6 @@
 import { render } from '@testing-library/react';
 import userEvent, { PointerEventsCheckLevel } from '@testing-library/user-event';
 import type { ReactNode } from 'react';
-import { TooltipProvider } from '@/components/tooltip';
 import type { Screen } from '@/canvas/commands/command';
 import type { SheetDocument } from '@/canvas/document/types';
 import type { Point } from '@/canvas/geometry/point';
@@ -41,9 +40,7 @@ export function openRoom(document: SheetDocument, content: ReactNode, mayEdit = 
   };
   render(
     <SheetContext.Provider value={store}>
-      <ScreenContext.Provider value={screen}>
-        <TooltipProvider>{content}</TooltipProvider>
-      </ScreenContext.Provider>
+      <ScreenContext.Provider value={screen}>{content}</ScreenContext.Provider>
     </SheetContext.Provider>,
   );
   return {
