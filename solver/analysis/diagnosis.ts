@@ -72,7 +72,8 @@ export function voltageLoopProblem(network: Network, loop: VoltageLoop, agrees: 
 
 /** A part of the network that no element of any form joins to the reference node. */
 export function noReferenceProblem(network: Network, nodes: readonly number[], rows: readonly number[]): Problem {
-  const what = rows.length === 0 ? capital(nodeWords(names(network, nodes))) : `The part with ${listNames(ids(network, rows))}`;
+  const what =
+    rows.length === 0 ? capital(nodeWords(names(network, nodes))) : `The part with ${listNames(ids(network, rows))}`;
   return problem(
     'noReference',
     ids(network, rows),
@@ -111,7 +112,10 @@ export function floatingProblem(
         'through an element that conducts at this frequency.',
     );
   }
-  const leads = around.length === 0 ? 'Nothing leads' : `Only ${listNames(ids(network, around).map(openWords(network)))} lead${around.length === 1 ? 's' : ''}`;
+  const leads =
+    around.length === 0
+      ? 'Nothing leads'
+      : `Only ${listNames(ids(network, around).map(openWords(network)))} lead${around.length === 1 ? 's' : ''}`;
   return problem(
     'floatingNode',
     ids(network, around),

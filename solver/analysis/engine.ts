@@ -61,7 +61,10 @@ export class Engine {
       return outcome.solved;
     });
     this.setGivenCurrents(structure, hasNoWayOn);
-    silenceQuietBlocks(network, branches, readings);
+    const contradicted = new Set(
+      components.filter(({ index }) => this.solved[index] !== true).flatMap(({ nodes }) => nodes.map((node) => structure.islandOf[node])),
+    );
+    silenceQuietBlocks(network, branches, readings, (node) => !contradicted.has(structure.islandOf[node]));
     readings.vKnown[REFERENCE] = 1;
     return problems;
   }

@@ -55,7 +55,13 @@ export function readGivenVoltages(
   for (const row of component.treeVoltages.toReversed()) {
     const child = childOf(row);
     const parent = structure.parent[child] ?? 0;
-    below.set(child, total(own.get(child), (childrenOf.get(child) ?? []).map((other) => below.get(other))));
+    below.set(
+      child,
+      total(
+        own.get(child),
+        (childrenOf.get(child) ?? []).map((other) => below.get(other)),
+      ),
+    );
     const siblings = childrenOf.get(parent);
     if (siblings === undefined) childrenOf.set(parent, [child]);
     else siblings.push(child);

@@ -12,14 +12,7 @@
  * - `notFinite`: values so large or so small that they leave the range of the arithmetic.
  */
 export type ProblemKind =
-  | 'invalid'
-  | 'noReference'
-  | 'floatingNode'
-  | 'voltageLoop'
-  | 'currentCutSet'
-  | 'resonance'
-  | 'singular'
-  | 'notFinite';
+  'invalid' | 'noReference' | 'floatingNode' | 'voltageLoop' | 'currentCutSet' | 'resonance' | 'singular' | 'notFinite';
 
 /** A problem in words, with the elements and the nodes at fault by their names in the element list. */
 export interface Problem {

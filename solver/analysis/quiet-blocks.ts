@@ -11,14 +11,23 @@ import type { Readings } from './readings';
  * and carries no current; a block without a live source has neither currents nor voltages. What is not determined stays
  * so: a lossless loop at its own resonance may carry any current.
  *
+ * @param holds whether Kirchhoff's laws hold all over the island of a node; where given values contradict each other
+ *   they do not, and nothing follows from them.
+ *
  * Method: blocks by depth-first search, J. Hopcroft and R. Tarjan, "Algorithm 447: efficient algorithms for graph
  * manipulation", Communications of the ACM 16 (1973) 372–378. Linear in the number of elements.
  */
-export function silenceQuietBlocks(network: Network, branches: BranchTable, readings: Readings): void {
+export function silenceQuietBlocks(
+  network: Network,
+  branches: BranchTable,
+  readings: Readings,
+  holds: (node: number) => boolean,
+): void {
   for (const block of findBlocks(network, branches)) {
     const [only] = block;
-    if (block.length === 1 && only !== undefined) {
-      // A given current that lies in no loop contradicts itself and is reported as such; it is not touched here.
+    if (only === undefined || !holds(network.first[only] ?? 0)) continue;
+    if (block.length === 1) {
+      // A given current that lies in no loop contradicts itself; what is given is not touched here.
       if (branches.form[only] !== GIVEN_CURRENT) silence(only, branches, readings);
     } else if (!block.some((row) => isLive(row, branches))) {
       for (const row of block) silence(row, branches, readings);

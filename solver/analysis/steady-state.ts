@@ -16,7 +16,8 @@ export interface SolveOptions {
 
 /** The fault of a frequency, in words, or undefined. */
 export function faultOfFrequency(frequency: unknown): string | undefined {
-  if (typeof frequency !== 'number' || !Number.isFinite(frequency)) return 'The frequency must be a finite number of hertz.';
+  if (typeof frequency !== 'number' || !Number.isFinite(frequency))
+    return 'The frequency must be a finite number of hertz.';
   return frequency < 0 ? 'The frequency must not be negative.' : undefined;
 }
 
@@ -54,7 +55,10 @@ function isAnythingKnown(engine: Engine): boolean {
   if (readings.vKnown.includes(1, REFERENCE + 1)) return true;
   return network.elements.some((_, row) => {
     if (readings.iKnown[row] !== 1) return false;
-    return branches.form[row] !== GIVEN_CURRENT || (engine.isSolved(network.first[row] ?? 0) && engine.isSolved(network.second[row] ?? 0));
+    return (
+      branches.form[row] !== GIVEN_CURRENT ||
+      (engine.isSolved(network.first[row] ?? 0) && engine.isSolved(network.second[row] ?? 0))
+    );
   });
 }
 

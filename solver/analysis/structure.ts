@@ -128,7 +128,10 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
     const pairs: [number, number][] = [];
     const pairOfRow = new Map<number, number>();
     for (const row of inSlots) {
-      const [one, other] = ends(row).map((node) => vertexOf[componentOf[node] === index ? node : root] ?? 0) as [number, number];
+      const [one, other] = ends(row).map((node) => vertexOf[componentOf[node] === index ? node : root] ?? 0) as [
+        number,
+        number,
+      ];
       if (one === other) continue;
       pairOfRow.set(row, pairs.length);
       pairs.push(one < other ? [one, other] : [other, one]);

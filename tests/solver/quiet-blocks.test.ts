@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { solve } from '@/solver';
 import { solved } from './support/expect';
-import { capacitor, inductor, network, resistor, voltageSource } from './support/networks';
+import { capacitor, currentSource, inductor, network, resistor, voltageSource } from './support/networks';
 
 /** A current that can only be nothing must be nothing, or its rounding shows as a reading with a phase. */
 describe('what carries no current', () => {
@@ -59,5 +59,17 @@ describe('what carries no current', () => {
     const solution = solved(answer);
     expect(solution.problems.map(({ kind }) => kind)).toContain('resonance');
     expect(solution.current('L1')).toBeUndefined();
+  });
+
+  it('concludes nothing where a given current has no way on, since Kirchhoff’s law does not hold there', () => {
+    const list = network(
+      resistor('R1', '1', '0', 1000),
+      currentSource('I1', '2', '3', 1),
+      voltageSource('V1', '4', '2', 1),
+      currentSource('I2', '1', '2', 1),
+    );
+    const solution = solved(solve(list, { frequency: 1000 }));
+    expect(solution.problems.length).toBeGreaterThan(0);
+    expect(solution.current('R1')).toMatchObject({ re: -1, im: 0 });
   });
 });
