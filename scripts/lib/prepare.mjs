@@ -71,7 +71,9 @@ export async function prepareDatabase({ env, layout, stampFor }) {
       closeSync(handle);
       const text = tailOf(log).trim();
       if (code !== 0) {
-        const reason = text.split('\n').findLast((line) => line.startsWith('failed: '))?.slice(8) ?? text.split('\n').at(-1);
+        const failed = text.split('\n').findLast((line) => line.startsWith('failed: '))?.slice('failed: '.length);
+        // The driver puts numbers of its own in front.
+        const reason = (failed ?? text.split('\n').at(-1) ?? '').replace(/^\(conn:[^)]*\) /, '');
         throw new Failure(`The database could not be prepared: ${reason || 'no reason was given'} (the whole text is in ${shown(log)}).`);
       }
       if (stampFor !== null) writeFileSync(stampOf(layout, stampFor), `${expectedStamp(layout, stampFor)}\n`);

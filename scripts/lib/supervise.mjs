@@ -10,7 +10,7 @@ import { isStopping, stopAll, stopLater } from './shutdown.mjs';
  */
 
 /** A server that ends more often than this within a minute is not started again: it would only end again. */
-const mostRestarts = 3;
+const mostRestarts = 5;
 
 /**
  * Which of the endings at these times is one too many.
