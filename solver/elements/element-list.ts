@@ -8,11 +8,12 @@
 export const REFERENCE_NODE = '0';
 
 /**
- * What a source delivers, as an rms phasor on the cosine: the time function is √2·rms·cos(2πft + phase). At 0 Hz the
- * value is the direct value rms·cos(phase).
+ * What a source delivers, as an rms phasor on the cosine: the time function is √2·rms·cos(2πft + phase). A direct
+ * source, with a frequency of 0, delivers the direct value rms·cos(phase). A source of the operating frequency keeps
+ * its phasor when that is 0 Hz: it is the limit of ever lower frequencies.
  */
 export interface SourceValue {
-  /** Volts or amperes, rms (the direct value at 0 Hz). A negative value is the same as 180° more. */
+  /** Volts or amperes, rms (the direct value of a direct source). A negative value is the same as 180° more. */
   readonly rms: number;
   /** Degrees, on the cosine. */
   readonly phase: number;

@@ -39,9 +39,9 @@ export function phasorRe(value: SourceValue): number {
   return value.rms * cosOfDegrees(value.phase);
 }
 
-/** The phasor by its imaginary part; see `phasorRe`. */
+/** The phasor by its imaginary part; see `phasorRe`. A direct value has none. */
 export function phasorIm(value: SourceValue): number {
-  return value.rms * cosOfDegrees(value.phase - 90);
+  return value.frequency === 0 ? 0 : value.rms * cosOfDegrees(value.phase - 90);
 }
 
 function cosOfDegrees(degrees: number): number {

@@ -14,7 +14,7 @@ const LONGEST_NAME = 200;
 /**
  * Checks that a value from outside is an element list, version 1: the shape, the kinds, two named nodes each, finite
  * numbers, unique ids. Fields that are not known are passed over. Whether the network has a solution is not asked
- * here. Gives the same object back, typed.
+ * here. Gives the same elements back, typed.
  */
 export function validateElementList(value: unknown): ElementListResult {
   if (!isRecord(value)) return refuse('An element list is an object with a version and elements.');

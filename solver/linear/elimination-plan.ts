@@ -164,7 +164,9 @@ export function planElimination(graph: PlanGraph): EliminationPlan {
   return {
     vertexCount,
     root,
-    boundary: Int32Array.from({ length: vertexCount }, (_, vertex) => vertex).filter((vertex) => group[vertex] === rootGroup),
+    boundary: Int32Array.from({ length: vertexCount }, (_, vertex) => vertex).filter(
+      (vertex) => group[vertex] === rootGroup,
+    ),
     slotLow: Int32Array.from(slots.low),
     slotHigh: Int32Array.from(slots.high),
     slotOfPair,

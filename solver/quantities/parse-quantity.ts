@@ -22,7 +22,8 @@ const LONGEST = 64;
  * - A letter in the place of the decimal sign is the multiplier (IEC 60062); `R` and `L` stand for ohms and milliohms.
  */
 export function parseQuantity(text: string, unit: Unit): ParsedQuantity {
-  if (text.length > LONGEST) return refuse(`That is over ${LONGEST} characters long; type one value, such as ${example(unit)}.`);
+  if (text.length > LONGEST)
+    return refuse(`That is over ${LONGEST} characters long; type one value, such as ${example(unit)}.`);
   const clean = normalise(text);
   if (clean === '') return refuse(`Type a value, such as ${example(unit)}.`);
   const signMatch = /^([+-]?) ?(.*)$/.exec(clean);
@@ -75,7 +76,8 @@ function normalise(text: string): string {
 }
 
 /** A number, grouped or not, with or without a power of ten, and then a prefix and a unit or nothing. */
-const PLAIN = /^(\d{1,3}(?: \d{3})+(?!\d)|\d+)?(?:([.,])(\d{3}(?: \d{3})+(?!\d)|\d*))?(?:[eE]([+-]?\d{1,5})(?!\d))? ?(.*)$/;
+const PLAIN =
+  /^(\d{1,3}(?: \d{3})+(?!\d)|\d+)?(?:([.,])(\d{3}(?: \d{3})+(?!\d)|\d*))?(?:[eE]([+-]?\d{1,5})(?!\d))? ?(.*)$/;
 
 function readPlain(sign: string, body: string, unit: Unit): ParsedQuantity | undefined {
   const match = PLAIN.exec(body);
@@ -159,7 +161,10 @@ function refuseTail(tail: string, behind: string, prefixed: boolean, unit: Unit)
   if (other !== undefined && other !== unit) return otherUnit(other, unit);
   if (other === unit) return { ok: false, message: `A prefix is not used with ${unit}; type it as ${example(unit)}.` };
   const wanted = unit === '' ? 'a plain number' : `a prefix and ${unit}`;
-  return { ok: false, message: `“${tail}” after the number is not understood; ${wanted} may stand there, as in ${example(unit)}.` };
+  return {
+    ok: false,
+    message: `“${tail}” after the number is not understood; ${wanted} may stand there, as in ${example(unit)}.`,
+  };
 }
 
 function otherUnit(other: Unit, unit: Unit): { readonly ok: false; readonly message: string } {

@@ -2,9 +2,7 @@
 export type PreferredSeries = 'E3' | 'E6' | 'E12' | 'E24' | 'E48' | 'E96' | 'E192';
 
 /** E24 is a list: 27 to 47 and 82 do not follow the rounded geometric series (IEC 60063; values found in public text). */
-const E24 = [
-  10, 11, 12, 13, 15, 16, 18, 20, 22, 24, 27, 30, 33, 36, 39, 43, 47, 51, 56, 62, 68, 75, 82, 91,
-] as const;
+const E24 = [10, 11, 12, 13, 15, 16, 18, 20, 22, 24, 27, 30, 33, 36, 39, 43, 47, 51, 56, 62, 68, 75, 82, 91] as const;
 
 const STEP_OF_E24: Readonly<Record<'E3' | 'E6' | 'E12' | 'E24', number>> = { E3: 8, E6: 4, E12: 2, E24: 1 };
 const STEP_OF_E192: Readonly<Record<'E48' | 'E96' | 'E192', number>> = { E48: 4, E96: 2, E192: 1 };

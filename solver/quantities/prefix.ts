@@ -17,7 +17,9 @@ const PREFIX_BY_EXPONENT: ReadonlyMap<number, string> = new Map([
 
 /** As typed: `u` stands in for µ, and `K` for kilo, which is how IEC 60062 writes it in a marking code. */
 const EXPONENT_BY_TYPED: ReadonlyMap<string, number> = new Map([
-  ...[...PREFIX_BY_EXPONENT].filter(([, prefix]) => prefix !== '').map(([exponent, prefix]) => [prefix, exponent] as const),
+  ...[...PREFIX_BY_EXPONENT]
+    .filter(([, prefix]) => prefix !== '')
+    .map(([exponent, prefix]) => [prefix, exponent] as const),
   ['u', -6],
   ['K', 3],
 ]);

@@ -111,13 +111,19 @@ export function parseRkm(text: string, unit: Unit): ParsedRkm {
   }
   const shape = readRkmFigure(code, unit) ?? readTrailingLetter(code, unit);
   if (shape === undefined) {
-    return { ok: false, message: `“${code}” is not a marking code for ${quantityName(unit)}; write it as in 4K7, R47 or 2n2.` };
+    return {
+      ok: false,
+      message: `“${code}” is not a marking code for ${quantityName(unit)}; write it as in 4K7, R47 or 2n2.`,
+    };
   }
   const value = Number(`${shape.mantissa}e${shape.exponent}`);
   if (shape.rest === '') return { ok: true, value, tolerance: null };
   const tolerance = toleranceOf(shape.rest, value, unit);
   if (tolerance === undefined) {
-    return { ok: false, message: `“${shape.rest}” at the end of “${code}” is not a tolerance letter, such as F, J or K.` };
+    return {
+      ok: false,
+      message: `“${shape.rest}” at the end of “${code}” is not a tolerance letter, such as F, J or K.`,
+    };
   }
   return { ok: true, value, tolerance };
 }

@@ -1,21 +1,6 @@
 /** The units that a field or a reading may have; the empty one is for a pure number (a ratio, a turns count). */
 export type Unit =
-  | 'Ω'
-  | 'F'
-  | 'H'
-  | 'V'
-  | 'A'
-  | 'Hz'
-  | 'rad/s'
-  | '°'
-  | 'W'
-  | 'var'
-  | 'VA'
-  | 'S'
-  | 's'
-  | 'J'
-  | 'dB'
-  | '';
+  'Ω' | 'F' | 'H' | 'V' | 'A' | 'Hz' | 'rad/s' | '°' | 'W' | 'var' | 'VA' | 'S' | 's' | 'J' | 'dB' | '';
 
 interface UnitWords {
   /** What a value in this unit is, with its article, as used in sentences. */
@@ -36,7 +21,11 @@ const UNIT_WORDS: Readonly<Record<Unit, UnitWords>> = {
   V: { quantity: 'a voltage', prefixes: true, spellings: ['V', 'volt', 'Volt', 'volts', 'Volts'] },
   A: { quantity: 'a current', prefixes: true, spellings: ['A', 'amp', 'Amp', 'amps', 'ampere', 'amperes'] },
   Hz: { quantity: 'a frequency', prefixes: true, spellings: ['Hz', 'hz', 'HZ', 'hertz', 'Hertz'] },
-  'rad/s': { quantity: 'an angular frequency', prefixes: true, spellings: ['rad/s', 'rad/sec', 'rad·s⁻¹', '/s', 's⁻¹'] },
+  'rad/s': {
+    quantity: 'an angular frequency',
+    prefixes: true,
+    spellings: ['rad/s', 'rad/sec', 'rad·s⁻¹', '/s', 's⁻¹'],
+  },
   '°': { quantity: 'an angle', prefixes: false, spellings: ['°', 'º', 'deg', 'degree', 'degrees'] },
   W: { quantity: 'an active power', prefixes: true, spellings: ['W', 'watt', 'Watt', 'watts'] },
   var: { quantity: 'a reactive power', prefixes: true, spellings: ['var', 'VAr', 'VAR', 'Var'] },

@@ -26,7 +26,11 @@ describe('IEC 60062 letter code', () => {
   });
 
   it.each(Object.entries(UNEQUAL_TOLERANCE))('%s is unequal', (letter, [minus, plus]) => {
-    expect(parseRkm(`10µ${letter}`, 'F')).toEqual({ ok: true, value: 1e-5, tolerance: { minus, plus, absolute: false } });
+    expect(parseRkm(`10µ${letter}`, 'F')).toEqual({
+      ok: true,
+      value: 1e-5,
+      tolerance: { minus, plus, absolute: false },
+    });
   });
 
   it.each(Object.entries(SMALL_CAPACITOR_TOLERANCE))('%s below 10 pF is ± %d pF', (letter, picofarads) => {
@@ -43,7 +47,11 @@ describe('IEC 60062 letter code', () => {
     ['470RK', 'Ω', 470, 10],
     ['4\u03bc7M', 'F', 4.7e-6, 20],
   ] as const)('%s in %s is %d ± %d per cent', (code, unit, value, percent) => {
-    expect(parseRkm(code, unit)).toEqual({ ok: true, value, tolerance: { minus: percent, plus: percent, absolute: false } });
+    expect(parseRkm(code, unit)).toEqual({
+      ok: true,
+      value,
+      tolerance: { minus: percent, plus: percent, absolute: false },
+    });
   });
 
   it.each(['', '4K7X', '4K7JJ', 'J', '4700', '4x7', 'K', '4K7 J'.repeat(5)])('refuses %j with a sentence', (code) => {

@@ -73,7 +73,9 @@ describe.each([true, false])('doubly terminated ladders, shunt first: %s', (shun
   it.each(ORDERS)('Butterworth of order %d follows 1/(1 + ω^2n)', (n) => {
     for (const omega of OMEGAS) {
       const promised = 1 / (1 + omega ** (2 * n));
-      expect(Math.abs(transfer(butterworth(n), shuntFirst, omega) / promised - 1)).toBeLessThanOrEqual(UNITS * n * Number.EPSILON);
+      expect(Math.abs(transfer(butterworth(n), shuntFirst, omega) / promised - 1)).toBeLessThanOrEqual(
+        UNITS * n * Number.EPSILON,
+      );
     }
   });
 
@@ -109,24 +111,28 @@ describe('a ladder on an ideal voltage source', () => {
 
 describe('tables', () => {
   it.each(Object.entries(BUTTERWORTH))('Butterworth of order %s', (order, printed) => {
-    butterworth(Number(order)).g.forEach((g, k) => expect(Math.abs(g - (printed[k] ?? 0))).toBeLessThanOrEqual(0.51e-6));
+    butterworth(Number(order)).g.forEach((g, k) =>
+      expect(Math.abs(g - (printed[k] ?? 0))).toBeLessThanOrEqual(0.51e-6),
+    );
   });
 
-  it.each(Object.entries(CHEBYSHEV).flatMap(([ripple, orders]) => Object.entries(orders).map(([n, ladder]) => [ripple, n, ladder] as const)))(
-    'Chebyshev of %s dB, order %s, to six decimals',
-    (ripple, order, printed) => {
-      const { g, load } = chebyshev(Number(order), Number(ripple));
-      g.forEach((value, k) => expect(Math.abs(value - (printed.g[k] ?? 0))).toBeLessThanOrEqual(0.51e-6));
-      expect(Math.abs(load - printed.load)).toBeLessThanOrEqual(0.51e-6);
-    },
-  );
+  it.each(
+    Object.entries(CHEBYSHEV).flatMap(([ripple, orders]) =>
+      Object.entries(orders).map(([n, ladder]) => [ripple, n, ladder] as const),
+    ),
+  )('Chebyshev of %s dB, order %s, to six decimals', (ripple, order, printed) => {
+    const { g, load } = chebyshev(Number(order), Number(ripple));
+    g.forEach((value, k) => expect(Math.abs(value - (printed.g[k] ?? 0))).toBeLessThanOrEqual(0.51e-6));
+    expect(Math.abs(load - printed.load)).toBeLessThanOrEqual(0.51e-6);
+  });
 
-  it.each(Object.entries(PRINTED_CHEBYSHEV).flatMap(([ripple, orders]) => Object.entries(orders).map(([n, ladder]) => [ripple, n, ladder] as const)))(
-    'Chebyshev of %s dB, order %s, as printed to four digits',
-    (ripple, order, printed) => {
-      const { g, load } = chebyshev(Number(order), Number(ripple));
-      g.forEach((value, k) => expect(Math.abs(value - (printed.g[k] ?? 0))).toBeLessThanOrEqual(1e-3));
-      expect(Math.abs(load - printed.load)).toBeLessThanOrEqual(1e-3);
-    },
-  );
+  it.each(
+    Object.entries(PRINTED_CHEBYSHEV).flatMap(([ripple, orders]) =>
+      Object.entries(orders).map(([n, ladder]) => [ripple, n, ladder] as const),
+    ),
+  )('Chebyshev of %s dB, order %s, as printed to four digits', (ripple, order, printed) => {
+    const { g, load } = chebyshev(Number(order), Number(ripple));
+    g.forEach((value, k) => expect(Math.abs(value - (printed.g[k] ?? 0))).toBeLessThanOrEqual(1e-3));
+    expect(Math.abs(load - printed.load)).toBeLessThanOrEqual(1e-3);
+  });
 });

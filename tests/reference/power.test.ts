@@ -9,20 +9,26 @@ const OMEGA = 2 * Math.PI * FREQUENCY;
 /** An impedance as resistor and reactance in series. */
 function load(id: string, a: string, b: string, re: number, im: number, omega = OMEGA): Element[] {
   const middle = `${id} inside`;
-  const reactance = im < 0 ? capacitor(`${id} X`, middle, b, -1 / (omega * im)) : inductor(`${id} X`, middle, b, im / omega);
+  const reactance =
+    im < 0 ? capacitor(`${id} X`, middle, b, -1 / (omega * im)) : inductor(`${id} X`, middle, b, im / omega);
   return [resistor(id, a, middle, re), reactance];
 }
 
 describe('the maximum power transfer theorem', () => {
-  const source = (re: number, im: number, volts: number): Element[] => [voltageSource('V1', '1', '0', volts), ...load('Zs', '1', '2', re, im)];
-  const delivered = (re: number, im: number, of: Element[]): number => power(network(...of, ...load('ZL', '2', '0', re, im)), FREQUENCY, 'ZL').re;
+  const source = (re: number, im: number, volts: number): Element[] => [
+    voltageSource('V1', '1', '0', volts),
+    ...load('Zs', '1', '2', re, im),
+  ];
+  const delivered = (re: number, im: number, of: Element[]): number =>
+    power(network(...of, ...load('ZL', '2', '0', re, im)), FREQUENCY, 'ZL').re;
 
   it('gives |V|²/4R to the conjugate impedance, and less to every other', () => {
     const from = source(15, 20, 120);
     const most = delivered(15, -20, from);
     expect(Math.abs(most / 240 - 1)).toBeLessThanOrEqual(32 * Number.EPSILON);
     for (const dr of [-0.01, 0, 0.01]) {
-      for (const dx of [-0.01, 0, 0.01]) if (dr !== 0 || dx !== 0) expect(delivered(15 + dr, -20 + dx, from)).toBeLessThan(most);
+      for (const dx of [-0.01, 0, 0.01])
+        if (dr !== 0 || dx !== 0) expect(delivered(15 + dr, -20 + dx, from)).toBeLessThan(most);
     }
   });
 
@@ -68,13 +74,36 @@ describe('power factor correction', () => {
   }
 
   /** Eaton SA02607001E (Nov. 2010), table 6 [found]; a few printed entries are off by one in the third decimal. */
-  const CORRECTED = [0.8, 0.81, 0.82, 0.83, 0.84, 0.85, 0.86, 0.87, 0.88, 0.89, 0.9, 0.91, 0.92, 0.93, 0.94, 0.95, 0.96, 0.97, 0.98, 0.99, 1];
+  const CORRECTED = [
+    0.8, 0.81, 0.82, 0.83, 0.84, 0.85, 0.86, 0.87, 0.88, 0.89, 0.9, 0.91, 0.92, 0.93, 0.94, 0.95, 0.96, 0.97, 0.98,
+    0.99, 1,
+  ];
   it.each([
-    [0.5, [0.982, 1.008, 1.034, 1.06, 1.086, 1.112, 1.139, 1.165, 1.192, 1.22, 1.248, 1.276, 1.306, 1.337, 1.369, 1.403, 1.44, 1.481, 1.529, 1.589, 1.732]],
-    [0.55, [0.769, 0.795, 0.821, 0.847, 0.873, 0.899, 0.926, 0.952, 0.979, 1.007, 1.035, 1.063, 1.093, 1.124, 1.156, 1.19, 1.227, 1.268, 1.316, 1.376, 1.519]],
-    [0.6, [0.583, 0.609, 0.635, 0.661, 0.687, 0.713, 0.74, 0.766, 0.793, 0.821, 0.849, 0.877, 0.907, 0.938, 0.97, 1.004, 1.041, 1.082, 1.13, 1.19, 1.333]],
+    [
+      0.5,
+      [
+        0.982, 1.008, 1.034, 1.06, 1.086, 1.112, 1.139, 1.165, 1.192, 1.22, 1.248, 1.276, 1.306, 1.337, 1.369, 1.403,
+        1.44, 1.481, 1.529, 1.589, 1.732,
+      ],
+    ],
+    [
+      0.55,
+      [
+        0.769, 0.795, 0.821, 0.847, 0.873, 0.899, 0.926, 0.952, 0.979, 1.007, 1.035, 1.063, 1.093, 1.124, 1.156, 1.19,
+        1.227, 1.268, 1.316, 1.376, 1.519,
+      ],
+    ],
+    [
+      0.6,
+      [
+        0.583, 0.609, 0.635, 0.661, 0.687, 0.713, 0.74, 0.766, 0.793, 0.821, 0.849, 0.877, 0.907, 0.938, 0.97, 1.004,
+        1.041, 1.082, 1.13, 1.19, 1.333,
+      ],
+    ],
   ] as const)('from a power factor of %d, the table’s row', (before, printed) => {
-    CORRECTED.forEach((after, k) => expect(Math.abs(multiplier(before, after) - (printed[k] ?? 0))).toBeLessThanOrEqual(0.0009));
+    CORRECTED.forEach((after, k) =>
+      expect(Math.abs(multiplier(before, after) - (printed[k] ?? 0))).toBeLessThanOrEqual(0.0009),
+    );
   });
 
   it('Bird ch. 26 ex. 6: 210 kW from 0.7 to 0.9 takes 112.54 kvar', () => {
@@ -86,7 +115,11 @@ describe('power factor correction', () => {
     const omega = 2 * Math.PI * 60;
     const q = Math.sqrt((240 * 9.615) ** 2 - 1500 ** 2);
     expect(Math.abs(q - 1754)).toBeLessThanOrEqual(0.5);
-    const motor = [voltageSource('V1', '1', '0', 240), resistor('R1', '1', '0', 240 ** 2 / 1500), inductor('L1', '1', '0', 240 ** 2 / (omega * q))];
+    const motor = [
+      voltageSource('V1', '1', '0', 240),
+      resistor('R1', '1', '0', 240 ** 2 / 1500),
+      inductor('L1', '1', '0', 240 ** 2 / (omega * q)),
+    ];
     expectFigure(power(network(...motor), 60, 'L1').im, '1753.57');
     expectFigure(magnitude(current(network(...motor), 60, 'V1')), '9.615');
     const corrected = network(...motor, capacitor('C1', '1', '0', 80e-6));
@@ -116,7 +149,8 @@ describe('power factor correction', () => {
 });
 
 describe('three phases', () => {
-  const star = (volts: number): Element[] => [0, -120, 120].map((phase, k) => voltageSource(`V${k}`, `p${k}`, '0', volts, phase));
+  const star = (volts: number): Element[] =>
+    [0, -120, 120].map((phase, k) => voltageSource(`V${k}`, `p${k}`, '0', volts, phase));
   const omega = 2 * Math.PI * 50;
 
   // Bird, 2nd ed. 2003, ch. 19 [found: executed notebook].
@@ -151,7 +185,8 @@ describe('three phases', () => {
   });
 
   it('Bird ch. 19 ex. 10: 10 Ω and 0.042 H on 415 V take 6283.29 W in star, 18849.88 W in delta', () => {
-    const total = (elements: Element[]): number => [0, 1, 2].reduce((sum, k) => sum + power(network(...elements), 50, `Z${k}`).re, 0);
+    const total = (elements: Element[]): number =>
+      [0, 1, 2].reduce((sum, k) => sum + power(network(...elements), 50, `Z${k}`).re, 0);
     const lines = star(415 / Math.sqrt(3));
     const inStar = [0, 1, 2].flatMap((k) => load(`Z${k}`, `p${k}`, 'n', 10, omega * 0.042, omega));
     const inDelta = [0, 1, 2].flatMap((k) => load(`Z${k}`, `p${k}`, `p${(k + 1) % 3}`, 10, omega * 0.042, omega));

@@ -38,7 +38,9 @@ function build(random: Random, recipe: Recipe): Element[] {
   for (let node = 2; node <= nodes; node++) {
     const other = random.whole(1, node - 1);
     if (recipe.floatingSource && node === nodes) {
-      elements.push(voltageSource('V2', String(node), String(other), random.between(0.1, 10), random.between(-180, 180)));
+      elements.push(
+        voltageSource('V2', String(node), String(other), random.between(0.1, 10), random.between(-180, 180)),
+      );
     } else join(node, other);
   }
   for (let extra = 0; extra < nodes + 2; extra++) {
@@ -47,12 +49,23 @@ function build(random: Random, recipe: Recipe): Element[] {
     join(a, a === b ? (a + 1) % (nodes + 1) : b);
   }
   if (recipe.currentSource) {
-    elements.push(currentSource('I1', String(random.whole(0, nodes - 1)), String(nodes), 10 ** random.between(-3, 3), random.between(-180, 180)));
+    elements.push(
+      currentSource(
+        'I1',
+        String(random.whole(0, nodes - 1)),
+        String(nodes),
+        10 ** random.between(-3, 3),
+        random.between(-180, 180),
+      ),
+    );
   }
   if (recipe.trap !== undefined) {
     const reactance = 10 ** random.between(-recipe.decades, recipe.decades);
     const [a, b] = [random.whole(1, nodes - 1), nodes];
-    elements.push(inductor('Lt', String(a), 't', reactance / OMEGA), capacitor('Ct', 't', String(b), (1 + recipe.trap.detuning) / (reactance * OMEGA)));
+    elements.push(
+      inductor('Lt', String(a), 't', reactance / OMEGA),
+      capacitor('Ct', 't', String(b), (1 + recipe.trap.detuning) / (reactance * OMEGA)),
+    );
   }
   return elements;
 }
@@ -93,23 +106,35 @@ function worstErrors(recipe: Recipe): { voltage: number; current: number; compar
 const PATIENCE = 300_000;
 
 describe('random networks against 64 digits', () => {
-  it('has node voltages right to 10·ε·(1 + condition) over 24 decades of impedance', () => {
-    const worst = worstErrors({ seeds: [1, 110], decades: 12, floatingSource: false, currentSource: false });
-    expect(worst.compared).toBeGreaterThan(1000);
-    expect(worst.voltage).toBeLessThanOrEqual(10);
-  }, PATIENCE);
+  it(
+    'has node voltages right to 10·ε·(1 + condition) over 24 decades of impedance',
+    () => {
+      const worst = worstErrors({ seeds: [1, 110], decades: 12, floatingSource: false, currentSource: false });
+      expect(worst.compared).toBeGreaterThan(1000);
+      expect(worst.voltage).toBeLessThanOrEqual(10);
+    },
+    PATIENCE,
+  );
 
-  it('has element currents right to 10·ε·(1 + condition) too, over 6 decades', () => {
-    const worst = worstErrors({ seeds: [201, 260], decades: 3, floatingSource: false, currentSource: false });
-    expect(worst.voltage).toBeLessThanOrEqual(10);
-    expect(worst.current).toBeLessThanOrEqual(10);
-  }, PATIENCE);
+  it(
+    'has element currents right to 10·ε·(1 + condition) too, over 6 decades',
+    () => {
+      const worst = worstErrors({ seeds: [201, 260], decades: 3, floatingSource: false, currentSource: false });
+      expect(worst.voltage).toBeLessThanOrEqual(10);
+      expect(worst.current).toBeLessThanOrEqual(10);
+    },
+    PATIENCE,
+  );
 
-  it('has both right to 50·ε·(1 + condition) with a floating source and a current source, over 4 decades', () => {
-    const worst = worstErrors({ seeds: [301, 340], decades: 2, floatingSource: true, currentSource: true });
-    expect(worst.voltage).toBeLessThanOrEqual(50);
-    expect(worst.current).toBeLessThanOrEqual(50);
-  }, PATIENCE);
+  it(
+    'has both right to 50·ε·(1 + condition) with a floating source and a current source, over 4 decades',
+    () => {
+      const worst = worstErrors({ seeds: [301, 340], decades: 2, floatingSource: true, currentSource: true });
+      expect(worst.voltage).toBeLessThanOrEqual(50);
+      expect(worst.current).toBeLessThanOrEqual(50);
+    },
+    PATIENCE,
+  );
 
   it.each([0, 1e-12, 1e-9, 1e-6])(
     'has both right to 20·ε·(1 + condition) where a node’s admittances cancel but for a part of %d',

@@ -14,7 +14,12 @@ const half = (sign: 1 | -1): number => (sign * bandwidth + Math.sqrt(bandwidth *
 const Q = f0 / bandwidth;
 
 describe('a series resonance', () => {
-  const list = network(voltageSource('V1', '1', '0', 1), resistor('R1', '1', '2', R), inductor('L1', '2', '3', L), capacitor('C1', '3', '0', C));
+  const list = network(
+    voltageSource('V1', '1', '0', 1),
+    resistor('R1', '1', '2', R),
+    inductor('L1', '2', '3', L),
+    capacitor('C1', '3', '0', C),
+  );
 
   it('has the whole voltage across the resistance at f0, and Q times it across the capacitor', () => {
     expect(Math.abs(magnitude(current(list, f0, 'R1')) * R - 1)).toBeLessThanOrEqual(8 * Number.EPSILON);
@@ -35,7 +40,12 @@ describe('a series resonance', () => {
 
 describe('a parallel resonance', () => {
   const Rp = 1e4;
-  const list = network(currentSource('I1', '0', '1', 1), resistor('R1', '1', '0', Rp), inductor('L1', '1', '0', L), capacitor('C1', '1', '0', C));
+  const list = network(
+    currentSource('I1', '0', '1', 1),
+    resistor('R1', '1', '0', Rp),
+    inductor('L1', '1', '0', L),
+    capacitor('C1', '1', '0', C),
+  );
   const width = 1 / (2 * Math.PI * Rp * C);
 
   it('has the resistance alone at f0, and Q times the current in the inductor', () => {
@@ -47,7 +57,9 @@ describe('a parallel resonance', () => {
   it('has half the power at the exact half-power frequencies', () => {
     for (const sign of [1, -1]) {
       const frequency = (sign * width + Math.sqrt(width ** 2 + 4 * f0 ** 2)) / 2;
-      expect(Math.abs((magnitude(voltage(list, frequency, '1')) / Rp) * Math.SQRT2 - 1)).toBeLessThanOrEqual((16 * f0 * Number.EPSILON) / width);
+      expect(Math.abs((magnitude(voltage(list, frequency, '1')) / Rp) * Math.SQRT2 - 1)).toBeLessThanOrEqual(
+        (16 * f0 * Number.EPSILON) / width,
+      );
     }
   });
 });
@@ -55,7 +67,12 @@ describe('a parallel resonance', () => {
 /** Bird, *Electrical Circuit Theory and Technology*, 2nd ed. 2003, ch. 28 and 29 [found: executed notebook]. */
 describe('printed resonances', () => {
   const series = (r: number, l: number, c: number, volts = 1) =>
-    network(voltageSource('V1', '1', '0', volts), resistor('R1', '1', '2', r), inductor('L1', '2', '3', l), capacitor('C1', '3', '0', c));
+    network(
+      voltageSource('V1', '1', '0', volts),
+      resistor('R1', '1', '2', r),
+      inductor('L1', '2', '3', l),
+      capacitor('C1', '3', '0', c),
+    );
   const maximum = (list: ReturnType<typeof series>, low: number, high: number): number =>
     crossing((f) => -degrees(current(list, f, 'R1')), low, high);
 
@@ -105,11 +122,18 @@ describe('printed resonances', () => {
     ['ch. 29 ex. 2, 30 Ω', 30, 0.1, 4e-5, 0, '63.66'],
     ['ch. 29 ex. 4, 3 Ω beside the capacitor', 5, 0.002, 2.5e-5, 3, '626.45'],
   ] as const)('%s: a coil of %d Ω, %d H beside %d F', (_, rl, l, c, rc, printed) => {
-    const tank = [resistor('RL', '1', '2', rl), inductor('L1', '2', '0', l), resistor('RC', '1', '3', rc), capacitor('C1', '3', '0', c), resistor('R9', '1', '0', 1e9)];
+    const tank = [
+      resistor('RL', '1', '2', rl),
+      inductor('L1', '2', '0', l),
+      resistor('RC', '1', '3', rc),
+      capacitor('C1', '3', '0', c),
+      resistor('R9', '1', '0', 1e9),
+    ];
     const reactance = (f: number): number => impedance(tank, f, '1').im;
     const frequency = crossing(reactance, Number(printed) * 0.9, Number(printed) * 1.1);
     expectFigure(frequency, printed);
-    if (printed === '4490.31') expect(Math.abs(magnitude(impedance(tank, frequency, '1')) / 2000 - 1)).toBeLessThanOrEqual(1e-5);
+    if (printed === '4490.31')
+      expect(Math.abs(magnitude(impedance(tank, frequency, '1')) / 2000 - 1)).toBeLessThanOrEqual(1e-5);
   });
 
   // Kuphaldt, Lessons In Electric Circuits II, ch. 6; the exact maxima are computed, the book's are grid points.
@@ -117,7 +141,12 @@ describe('printed resonances', () => {
     ['in series with the coil', 100, 0, 136.173],
     ['in series with the capacitor', 0, 100, 186.016],
   ] as const)('a damped tank, 100 Ω %s, has its largest impedance, 146.789 Ω, there', (_, rl, rc, printed) => {
-    const tank = [resistor('RL', '1', '2', rl), inductor('L1', '2', '0', 0.1), resistor('RC', '1', '3', rc), capacitor('C1', '3', '0', 1e-5)];
+    const tank = [
+      resistor('RL', '1', '2', rl),
+      inductor('L1', '2', '0', 0.1),
+      resistor('RC', '1', '3', rc),
+      capacitor('C1', '3', '0', 1e-5),
+    ];
     const size = (f: number): number => magnitude(impedance(tank, f, '1'));
     const top = peak(size, 100, 250);
     expect(Math.abs(top - printed)).toBeLessThanOrEqual(0.002);

@@ -1,7 +1,19 @@
 import { describe, expect, it } from 'vitest';
 import type { Element } from '@/solver';
 import { capacitor, inductor, network, resistor, voltageSource } from '../solver/support/networks';
-import { crossing, decibels, degrees, expectFigure, impedance, level, logarithmic, magnitude, peak, power, voltage } from './support/measure';
+import {
+  crossing,
+  decibels,
+  degrees,
+  expectFigure,
+  impedance,
+  level,
+  logarithmic,
+  magnitude,
+  peak,
+  power,
+  voltage,
+} from './support/measure';
 
 /**
  * Starter networks of the library, loudspeaker crossovers and equivalents. Figures computed with an independent
@@ -66,7 +78,12 @@ describe('ST-22 voice-coil impedance compensation', () => {
   const coil = [resistor('Re', 's', 'x', 5.6), inductor('Le', 'x', '0', 0.62e-3)];
   it('holds 5.568 to 5.60 Ω from 100 Hz to 20 kHz, where the coil alone has 78.1 Ω', () => {
     expectFigure(magnitude(impedance(coil, 20e3, 's')), '78.1');
-    const [smallest, largest] = extremes([...coil, resistor('R1', 's', 'y', 5.6), capacitor('C1', 'y', '0', 20e-6)], 's', 100, 20e3);
+    const [smallest, largest] = extremes(
+      [...coil, resistor('R1', 's', 'y', 5.6), capacitor('C1', 'y', '0', 20e-6)],
+      's',
+      100,
+      20e3,
+    );
     expectFigure(smallest, '5.568');
     expectFigure(largest, '5.60');
   });
@@ -141,6 +158,9 @@ describe('ST-26 baffle-step shelf, 6 Ω', () => {
     );
     expectFigure(level(list, 1e7, 'out', 1), '-4.082');
     expectFigure(level(list, 377.5, 'out', 1), '-2.041');
-    expectFigure(crossing((f) => level(list, f, 'out', 1) + 20 * Math.log10(1.6) / 2, 100, 1000), '377.5');
+    expectFigure(
+      crossing((f) => level(list, f, 'out', 1) + (20 * Math.log10(1.6)) / 2, 100, 1000),
+      '377.5',
+    );
   });
 });

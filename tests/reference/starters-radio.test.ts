@@ -3,7 +3,20 @@ import type { Element } from '@/solver';
 import { solve } from '@/solver';
 import { solved } from '../solver/support/expect';
 import { capacitor, currentSource, inductor, network, resistor, voltageSource } from '../solver/support/networks';
-import { crossing, current, decibels, degrees, expectFigure, impedance, level, magnitude, peak, power, reflection, voltage } from './support/measure';
+import {
+  crossing,
+  current,
+  decibels,
+  degrees,
+  expectFigure,
+  impedance,
+  level,
+  magnitude,
+  peak,
+  power,
+  reflection,
+  voltage,
+} from './support/measure';
 
 /**
  * Starter networks of the library, matching and attenuation up to VHF. Figures computed with an independent
@@ -23,7 +36,11 @@ function transducerGain(elements: readonly Element[], frequency: number, source:
 
 describe('ST-33 L match, 50 to 12.5 Ω, 27.12 MHz', () => {
   const f0 = 27.12e6;
-  const match = (c: number, l: number): Element[] => [capacitor('C1', 'in', '0', c), inductor('L1', 'in', 'out', l), resistor('RL', 'out', '0', 12.5)];
+  const match = (c: number, l: number): Element[] => [
+    capacitor('C1', 'in', '0', c),
+    inductor('L1', 'in', 'out', l),
+    resistor('RL', 'out', '0', 12.5),
+  ];
   const omega = 2 * Math.PI * f0;
   const q = Math.sqrt(50 / 12.5 - 1);
   const [c, l] = [q / (omega * 50), (q * 12.5) / omega];
@@ -44,7 +61,11 @@ describe('ST-33 L match, 50 to 12.5 Ω, 27.12 MHz', () => {
   });
 
   it('loses 0.0625 dB with an inductor of Q 120, and 7.85 dB at twice the frequency', () => {
-    const lossy = [...ideal.filter(({ id }) => id !== 'L1'), inductor('L1', 'in', 'x', l), resistor('Rq', 'x', 'out', (omega * l) / 120)];
+    const lossy = [
+      ...ideal.filter(({ id }) => id !== 'L1'),
+      inductor('L1', 'in', 'x', l),
+      resistor('Rq', 'x', 'out', (omega * l) / 120),
+    ];
     expectFigure(transducerGain(lossy, f0, 50, 'RL'), '-0.0625');
     expectFigure(transducerGain(lossy, 2 * f0, 50, 'RL'), '-7.85');
   });
@@ -92,12 +113,22 @@ describe('ST-35 π match, 50 to 800 Ω, 10.1 MHz', () => {
 
 describe('resistive pads', () => {
   it('ST-37 π 95.3–71.5–95.3 loses 10.067 dB, return loss 53.8 dB', () => {
-    const pi = [resistor('R1', 'in', '0', 95.3), resistor('R2', 'in', 'out', 71.5), resistor('R3', 'out', '0', 95.3), resistor('RL', 'out', '0', 50)];
+    const pi = [
+      resistor('R1', 'in', '0', 95.3),
+      resistor('R2', 'in', 'out', 71.5),
+      resistor('R3', 'out', '0', 95.3),
+      resistor('RL', 'out', '0', 50),
+    ];
     expectFigure(transducerGain(pi, 1e6, 50, 'RL'), '-10.067');
     expectFigure(returnLoss(pi, 1e6, 'in', 50), '53.8');
   });
   it('ST-37 T 26.1–35.7–26.1 loses 9.950 dB, return loss 48.0 dB', () => {
-    const tee = [resistor('R1', 'in', 'x', 26.1), resistor('R2', 'x', '0', 35.7), resistor('R3', 'x', 'out', 26.1), resistor('RL', 'out', '0', 50)];
+    const tee = [
+      resistor('R1', 'in', 'x', 26.1),
+      resistor('R2', 'x', '0', 35.7),
+      resistor('R3', 'x', 'out', 26.1),
+      resistor('RL', 'out', '0', 50),
+    ];
     expectFigure(transducerGain(tee, 1e6, 50, 'RL'), '-9.950');
     expectFigure(returnLoss(tee, 1e6, 'in', 50), '48.0');
   });
@@ -122,12 +153,19 @@ describe('resistive pads', () => {
 describe('ST-41 lattice balun, 50 to 2 × 100 Ω, 50 MHz', () => {
   const omega = 2 * Math.PI * 50e6;
   const [l, c] = [100 / omega, 1 / (100 * omega)];
-  const lattice = [inductor('L1', 'in', 'a', l), capacitor('C1', 'a', '0', c), capacitor('C2', 'in', 'b', c), inductor('L2', 'b', '0', l)];
+  const lattice = [
+    inductor('L1', 'in', 'a', l),
+    capacitor('C1', 'a', '0', c),
+    capacitor('C2', 'in', 'b', c),
+    inductor('L2', 'b', '0', l),
+  ];
   const source = [voltageSource('V1', 's', '0', 2), resistor('Rs', 's', 'in', 50)];
 
   it('is matched, and gives 1.000 V at ∓90° on its outputs', () => {
     const loads = [resistor('Ra', 'a', '0', 100), resistor('Rb', 'b', '0', 100)];
-    expect(magnitude(reflection(impedance([...lattice, ...loads], 50e6, 'in'), 50))).toBeLessThanOrEqual(64 * Number.EPSILON);
+    expect(magnitude(reflection(impedance([...lattice, ...loads], 50e6, 'in'), 50))).toBeLessThanOrEqual(
+      64 * Number.EPSILON,
+    );
     const list = network(...source, ...lattice, ...loads);
     const [a, b] = [voltage(list, 50e6, 'a'), voltage(list, 50e6, 'b')];
     expectFigure(magnitude(a), '1.000');
@@ -142,7 +180,11 @@ describe('ST-41 lattice balun, 50 to 2 × 100 Ω, 50 MHz', () => {
     const list = network(...source, ...lattice, resistor('RL', 'a', 'b', 200));
     const solution = solved(solve(list, { frequency: 50e6 }));
     expect(solution.problems).toHaveLength(1);
-    expect(solution.problems[0]).toMatchObject({ kind: 'resonance', nodes: ['a', 'b'], elements: ['L1', 'C1', 'C2', 'L2'] });
+    expect(solution.problems[0]).toMatchObject({
+      kind: 'resonance',
+      nodes: ['a', 'b'],
+      elements: ['L1', 'C1', 'C2', 'L2'],
+    });
     expect(solution.voltage('a')).toBeUndefined();
     expect(solution.voltage('b')).toBeUndefined();
     expectFigure(magnitude(solution.elementVoltage('RL') ?? { re: 0, im: 0 }), '2.000');
@@ -185,7 +227,11 @@ describe('ST-42 double-tuned, top-capacitor coupled, 2 MHz', () => {
 describe('ST-43 quartz resonator, 6 MHz', () => {
   const series = 6e6;
   const inductance = 1 / ((2 * Math.PI * series) ** 2 * 12e-15);
-  const motional = [capacitor('Cm', 'n', 'x', 12e-15), inductor('Lm', 'x', 'y', inductance), resistor('Rm', 'y', '0', 22)];
+  const motional = [
+    capacitor('Cm', 'n', 'x', 12e-15),
+    inductor('Lm', 'x', 'y', inductance),
+    resistor('Rm', 'y', '0', 22),
+  ];
   const lossless = motional.map((element) => (element.kind === 'resistor' ? { ...element, resistance: 0 } : element));
 
   it('has Q = 100 477, its parallel resonance at 6.011239 MHz, and is pulled by 283 ppm by 18 pF', () => {
@@ -196,10 +242,12 @@ describe('ST-43 quartz resonator, 6 MHz', () => {
     const across = power(list, atResonance, 'Lm').im / power(list, atResonance, 'Rm').re;
     expect(Math.abs(across - 100477)).toBeLessThanOrEqual(1);
     const shunt = capacitor('C0', 'n', '0', 3.2e-12);
-    const admittance = (f: number): number => current(network(voltageSource('V1', 'n', '0', 1), ...lossless, shunt), f, 'V1').im;
+    const admittance = (f: number): number =>
+      current(network(voltageSource('V1', 'n', '0', 1), ...lossless, shunt), f, 'V1').im;
     expectFigure(crossing(admittance, series * 1.0001, series * 1.01) / 1e6, '6.011239');
     const loaded = (f: number): number =>
-      current(network(voltageSource('V1', 'n', '0', 1), ...lossless, shunt, capacitor('CL', 'n', '0', 18e-12)), f, 'V1').im;
+      current(network(voltageSource('V1', 'n', '0', 1), ...lossless, shunt, capacitor('CL', 'n', '0', 18e-12)), f, 'V1')
+        .im;
     expectFigure((crossing(loaded, series * 1.00001, series * 1.005) / series - 1) * 1e6, '283');
   });
 });

@@ -1,6 +1,16 @@
 import { describe, expect, it } from 'vitest';
 import { capacitor, inductor, network, resistor, voltageSource } from '../solver/support/networks';
-import { crossing, degrees, expectFigure, impedance, level, magnitude, peak, reflection, voltage } from './support/measure';
+import {
+  crossing,
+  degrees,
+  expectFigure,
+  impedance,
+  level,
+  magnitude,
+  peak,
+  reflection,
+  voltage,
+} from './support/measure';
 
 /**
  * Starter networks of the library that resistors, capacitors, inductors and sources build: sensor, measuring, audio
@@ -21,7 +31,10 @@ describe('ST-01 first-order low-pass, loaded', () => {
     const direct = level(list, 0, 'out', 1);
     expectFigure(direct, '-0.449');
     expectFigure(level(list, 1e5, 'out', 1), '-20.859');
-    expectFigure(crossing((f) => level(list, f, 'out', 1) - direct - HALF_POWER, 1e3, 1e5), '9582.1');
+    expectFigure(
+      crossing((f) => level(list, f, 'out', 1) - direct - HALF_POWER, 1e3, 1e5),
+      '9582.1',
+    );
   });
   it('has H = 0.657034 at −46.2227° at 10 kHz, and thermal noise by the real part of its output impedance', () => {
     const h = voltage(list, 1e4, 'out');
@@ -44,7 +57,10 @@ describe('ST-02 coupling capacitor', () => {
   it('has its half-power frequency at 1.5071 Hz, loses 0.183 dB above, and turns 4.31° at 20 Hz', () => {
     const high = level(list, 1e6, 'out', 1);
     expectFigure(high, '-0.183');
-    expectFigure(crossing((f) => level(list, f, 'out', 1) - high - HALF_POWER, 0.1, 100), '1.5071');
+    expectFigure(
+      crossing((f) => level(list, f, 'out', 1) - high - HALF_POWER, 0.1, 100),
+      '1.5071',
+    );
     expectFigure(degrees(voltage(list, 20, 'out')), '4.31');
   });
 });
@@ -113,7 +129,10 @@ describe('ST-11 third-order Butterworth low-pass, 600 Ω', () => {
       capacitor('C2', 'b', '0', 82e-9),
       resistor('RL', 'b', '0', 600),
     );
-    expectFigure(crossing((f) => level(list, f, 'b', 1) - HALF_POWER, 1e3, 1e4), '3200.2');
+    expectFigure(
+      crossing((f) => level(list, f, 'b', 1) - HALF_POWER, 1e3, 1e4),
+      '3200.2',
+    );
     expectFigure(level(list, 9600, 'b', 1), '-28.51');
   });
 });
@@ -173,7 +192,14 @@ describe('ST-14 m-derived T section, m = 0.6 (Zobel 1923)', () => {
     expectFigure(level(list, 3e3, 'c', 1), '-0.093');
     expectFigure(level(list, 5e3, 'c', 1), '-4.915');
     expectFigure(level(list, 20e3, 'c', 1), '-12.74');
-    expectFigure(crossing((f) => impedance([capacitor('C1', 'b', 'x', 62e-9), inductor('L2', 'x', '0', 10e-3)], f, 'b').im, 5e3, 8e3), '6391.8');
+    expectFigure(
+      crossing(
+        (f) => impedance([capacitor('C1', 'b', 'x', 62e-9), inductor('L2', 'x', '0', 10e-3)], f, 'b').im,
+        5e3,
+        8e3,
+      ),
+      '6391.8',
+    );
   });
 });
 
@@ -225,7 +251,12 @@ describe('a two-port: 50 + j25 Ω in series, in 50 Ω', () => {
     const seen = reflection(impedance([...arm, resistor('RL', 'b', '0', 50)], 1000, 'a'), 50);
     expectFigure(seen.re, '0.351351');
     expectFigure(seen.im, '0.108108');
-    const list = network(voltageSource('V1', 's', '0', 2), resistor('Rs', 's', 'a', 50), ...arm, resistor('RL', 'b', '0', 50));
+    const list = network(
+      voltageSource('V1', 's', '0', 2),
+      resistor('Rs', 's', 'a', 50),
+      ...arm,
+      resistor('RL', 'b', '0', 50),
+    );
     const through = voltage(list, 1000, 'b');
     expectFigure(through.re, '0.648649');
     expectFigure(through.im, '-0.108108');

@@ -32,7 +32,10 @@ function toElements({ n, t, nodes, v }: WorkedElement, omega: number): Element[]
       return [currentSource(n, a, b, re, im)];
     case 'Z': {
       const middle = `${n} inside`;
-      const reactance = im < 0 ? capacitor(`${n} reactance`, middle, b, -1 / (omega * im)) : inductor(`${n} reactance`, middle, b, im / omega);
+      const reactance =
+        im < 0
+          ? capacitor(`${n} reactance`, middle, b, -1 / (omega * im))
+          : inductor(`${n} reactance`, middle, b, im / omega);
       return [resistor(n, a, middle, re), reactance];
     }
   }

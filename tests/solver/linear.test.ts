@@ -34,10 +34,16 @@ function plain(vertexCount: number, pairs: readonly (readonly [number, number])[
 describe('planElimination', () => {
   it('makes no fill on a ladder: the work grows with its length', () => {
     const ladder = (length: number): [number, number][] =>
-      Array.from({ length }, (_, k) => [
-        [k, k + 1],
-        [0, k + 1],
-      ] as [number, number][]).flat().filter(([a, b]) => a !== b);
+      Array.from(
+        { length },
+        (_, k) =>
+          [
+            [k, k + 1],
+            [0, k + 1],
+          ] as [number, number][],
+      )
+        .flat()
+        .filter(([a, b]) => a !== b);
     const short = plain(51, ladder(50));
     const long = plain(501, ladder(500));
     expect(short.slotLow).toHaveLength(99);
@@ -46,13 +52,29 @@ describe('planElimination', () => {
   });
 
   it('takes the leaves of a star before its middle', () => {
-    const plan = plain(6, [[0, 1], [1, 2], [1, 3], [1, 4], [1, 5]]);
+    const plan = plain(6, [
+      [0, 1],
+      [1, 2],
+      [1, 3],
+      [1, 4],
+      [1, 5],
+    ]);
     expect([...plan.stepVertex]).toEqual([2, 3, 4, 5, 1]);
     expect(plan.target).toHaveLength(0);
   });
 
   it('keeps the root’s group to the end, and joins other groups after all single vertices', () => {
-    const plan = plain(6, [[0, 2], [2, 3], [3, 4], [4, 5], [1, 5]], [0, 0, 2, 3, 3, 5]);
+    const plan = plain(
+      6,
+      [
+        [0, 2],
+        [2, 3],
+        [3, 4],
+        [4, 5],
+        [1, 5],
+      ],
+      [0, 0, 2, 3, 3, 5],
+    );
     expect([...plan.boundary]).toEqual([0, 1]);
     expect([...plan.stepVertex].slice(0, 2).sort()).toEqual([2, 5]);
     expect([...plan.stepInto]).toEqual([-1, -1, 3, -1]);
@@ -61,7 +83,14 @@ describe('planElimination', () => {
 
 describe('StarMesh', () => {
   it('divides a voltage, and says so between every pair of vertices', () => {
-    const plan = plain(3, [[0, 2], [1, 2]], [0, 0, 2]);
+    const plan = plain(
+      3,
+      [
+        [0, 2],
+        [1, 2],
+      ],
+      [0, 0, 2],
+    );
     const mesh = new StarMesh(plan);
     mesh.yRe[plan.slotOfPair[0] ?? 0] = 1;
     mesh.yRe[plan.slotOfPair[1] ?? 0] = 3;
@@ -75,12 +104,22 @@ describe('StarMesh', () => {
   });
 
   it('says what cancellation left of the weakest pivot, and where', () => {
-    const plan = plain(2, [[0, 1], [0, 1]]);
+    const plan = plain(2, [
+      [0, 1],
+      [0, 1],
+    ]);
     const mesh = new StarMesh(plan);
     mesh.yIm[0] = 1 - 1;
     expect(mesh.factor()).toBe(0);
     expect(mesh.weakest).toBe(1);
-    const three = plain(3, [[0, 2], [1, 2]], [0, 0, 2]);
+    const three = plain(
+      3,
+      [
+        [0, 2],
+        [1, 2],
+      ],
+      [0, 0, 2],
+    );
     const near = new StarMesh(three);
     near.yIm[three.slotOfPair[0] ?? 0] = 1;
     near.yIm[three.slotOfPair[1] ?? 0] = -1 + 1e-6;
@@ -105,7 +144,16 @@ function system(rows: readonly (readonly number[])[], right: readonly number[], 
 
 describe('solveDense', () => {
   it('solves what has full rank', () => {
-    const outcome = solveDense(system([[0, 2, 1], [1, 0, 3], [4, 5, 0]], [7, 10, 14]));
+    const outcome = solveDense(
+      system(
+        [
+          [0, 2, 1],
+          [1, 0, 3],
+          [4, 5, 0],
+        ],
+        [7, 10, 14],
+      ),
+    );
     expect(outcome).toMatchObject({ rank: 3, consistent: true, nullVectors: [] });
     [1, 2, 3].forEach((x, k) => expect(outcome.re[k]).toBeCloseTo(x, 14));
   });
@@ -127,23 +175,41 @@ describe('solveDense', () => {
     const zero = new Float64Array(size * size);
     const outcome = solveDense({ size, re, im, error: zero, rightRe, rightIm, rightError: new Float64Array(size) });
     expect(outcome.rank).toBe(size);
-    x.forEach(([xr, xi], k) => expect(Math.hypot((outcome.re[k] ?? 0) - xr, (outcome.im[k] ?? 0) - xi)).toBeLessThan(1e-12));
+    x.forEach(([xr, xi], k) =>
+      expect(Math.hypot((outcome.re[k] ?? 0) - xr, (outcome.im[k] ?? 0) - xi)).toBeLessThan(1e-12),
+    );
   });
 
   it('finds the rank, and what is free, where rows depend on each other but for rounding', () => {
     // The third row is a tenth of the first and a fifth of the second, which no double holds exactly.
-    const rows = [[0.1, 0.2, 0.3], [0.4, 0.5, 0.6], [0.1 * 0.1 + 0.2 * 0.4, 0.1 * 0.2 + 0.2 * 0.5, 0.1 * 0.3 + 0.2 * 0.6]];
+    const rows = [
+      [0.1, 0.2, 0.3],
+      [0.4, 0.5, 0.6],
+      [0.1 * 0.1 + 0.2 * 0.4, 0.1 * 0.2 + 0.2 * 0.5, 0.1 * 0.3 + 0.2 * 0.6],
+    ];
     const right = [0.6, 1.5, 0.1 * 0.6 + 0.2 * 1.5];
     const outcome = solveDense(system(rows, right));
     expect(outcome).toMatchObject({ rank: 2, consistent: true });
     const [free] = outcome.nullVectors;
     const scale = free?.re[0] ?? 1;
     [1, -2, 1].forEach((entry, k) => expect((free?.re[k] ?? 0) / scale).toBeCloseTo(entry, 12));
-    rows.forEach((row, k) => expect(row.reduce((sum, a, j) => sum + a * (outcome.re[j] ?? 0), 0)).toBeCloseTo(right[k] ?? 0, 14));
+    rows.forEach((row, k) =>
+      expect(row.reduce((sum, a, j) => sum + a * (outcome.re[j] ?? 0), 0)).toBeCloseTo(right[k] ?? 0, 14),
+    );
     expect(solveDense(system(rows, [0.6, 1.5, 0.4])).consistent).toBe(false);
   });
 
   it('does not take a small entry for a zero that is exact', () => {
-    expect(solveDense(system([[1, 0], [0, 1e-200]], [1, 1e-200]))).toMatchObject({ rank: 2 });
+    expect(
+      solveDense(
+        system(
+          [
+            [1, 0],
+            [0, 1e-200],
+          ],
+          [1, 1e-200],
+        ),
+      ),
+    ).toMatchObject({ rank: 2 });
   });
 });

@@ -160,11 +160,15 @@ describe('parseQuantity', () => {
       maxLength: 12,
     });
     fc.assert(
-      fc.property(fc.oneof(typed, fc.string({ unit: 'binary', maxLength: 80 })), fc.constantFrom(...UNITS), (text, unit) => {
-        const parsed = parseQuantity(text, unit);
-        if (parsed.ok) return Number.isFinite(parsed.value) && parsed.echo.length > 0;
-        return parsed.message.length > 10 && parsed.message.length < 200;
-      }),
+      fc.property(
+        fc.oneof(typed, fc.string({ unit: 'binary', maxLength: 80 })),
+        fc.constantFrom(...UNITS),
+        (text, unit) => {
+          const parsed = parseQuantity(text, unit);
+          if (parsed.ok) return Number.isFinite(parsed.value) && parsed.echo.length > 0;
+          return parsed.message.length > 10 && parsed.message.length < 200;
+        },
+      ),
       { seed: 20260101, numRuns: 5000 },
     );
   });
@@ -183,13 +187,24 @@ describe('parseQuantity', () => {
   });
 
   it('reads back what formatQuantity set, within half a unit of the last digit shown', () => {
-    const sizes = fc.tuple(fc.double({ min: 1, max: 9.999, noNaN: true }), fc.integer({ min: -17, max: 19 }), fc.boolean());
+    const sizes = fc.tuple(
+      fc.double({ min: 1, max: 9.999, noNaN: true }),
+      fc.integer({ min: -17, max: 19 }),
+      fc.boolean(),
+    );
     fc.assert(
-      fc.property(sizes, fc.integer({ min: 1, max: 17 }), fc.constantFrom(...UNITS), ([mantissa, power, negative], digits, unit) => {
-        const value = (negative ? -1 : 1) * mantissa * 10 ** power;
-        const parsed = parseQuantity(formatQuantity(value, unit, digits), unit);
-        return parsed.ok && Math.abs(parsed.value - value) <= Math.abs(value) * (5.01 * 10 ** -digits + 2 * Number.EPSILON);
-      }),
+      fc.property(
+        sizes,
+        fc.integer({ min: 1, max: 17 }),
+        fc.constantFrom(...UNITS),
+        ([mantissa, power, negative], digits, unit) => {
+          const value = (negative ? -1 : 1) * mantissa * 10 ** power;
+          const parsed = parseQuantity(formatQuantity(value, unit, digits), unit);
+          return (
+            parsed.ok && Math.abs(parsed.value - value) <= Math.abs(value) * (5.01 * 10 ** -digits + 2 * Number.EPSILON)
+          );
+        },
+      ),
       { seed: 20260103, numRuns: 3000 },
     );
   });

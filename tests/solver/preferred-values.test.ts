@@ -24,13 +24,18 @@ describe('nearestPreferred', () => {
   it('never takes a value that another of the series is nearer to, by ratio', () => {
     const series = fc.constantFrom('E3', 'E6', 'E12', 'E24', 'E48', 'E96', 'E192' as const);
     fc.assert(
-      fc.property(fc.double({ min: 1, max: 10, noNaN: true }), fc.integer({ min: -15, max: 12 }), series, (m, power, name) => {
-        const value = m * 10 ** power;
-        const off = Math.abs(Math.log(nearestPreferred(value, name) / value));
-        return [power - 1, power, power + 1].every((decade) =>
-          preferredValues(name).every((step) => Math.abs(Math.log((step * 10 ** decade) / value)) >= off - 1e-12),
-        );
-      }),
+      fc.property(
+        fc.double({ min: 1, max: 10, noNaN: true }),
+        fc.integer({ min: -15, max: 12 }),
+        series,
+        (m, power, name) => {
+          const value = m * 10 ** power;
+          const off = Math.abs(Math.log(nearestPreferred(value, name) / value));
+          return [power - 1, power, power + 1].every((decade) =>
+            preferredValues(name).every((step) => Math.abs(Math.log((step * 10 ** decade) / value)) >= off - 1e-12),
+          );
+        },
+      ),
       { seed: 20260104, numRuns: 500 },
     );
   });

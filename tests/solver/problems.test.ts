@@ -13,7 +13,13 @@ function onlyProblem(elements: readonly Element[], frequency: number): Problem {
   return problem;
 }
 
-function expectProblem(problem: Problem, kind: ProblemKind, elements: readonly string[], nodes: readonly string[], words: RegExp): void {
+function expectProblem(
+  problem: Problem,
+  kind: ProblemKind,
+  elements: readonly string[],
+  nodes: readonly string[],
+  words: RegExp,
+): void {
   expect(problem).toMatchObject({ ok: false, kind });
   expect([...problem.elements].sort()).toEqual([...elements].sort());
   expect([...problem.nodes].sort()).toEqual([...nodes].sort());
@@ -45,7 +51,12 @@ describe('no reference node', () => {
   });
 
   it('is said once for an island of several parts', () => {
-    const list = network(...rest, voltageSource('V1', 'a', 'b', 10), resistor('R1', 'b', 'c', 5), capacitor('C1', 'c', 'a', 1e-6));
+    const list = network(
+      ...rest,
+      voltageSource('V1', 'a', 'b', 10),
+      resistor('R1', 'b', 'c', 5),
+      capacitor('C1', 'c', 'a', 1e-6),
+    );
     const solution = solved(solve(list, { frequency: 0 }));
     expect(solution.problems.map(({ kind }) => kind)).toEqual(['noReference']);
     expect(solution.current('C1')).toMatchObject({ re: 0, im: 0 });
@@ -65,7 +76,13 @@ describe('floating nodes', () => {
   });
 
   it('finds the far end of a dangling capacitor at 0 Hz, and of one of 0 F', () => {
-    expectProblem(onlyProblem([...rest, capacitor('C1', '9', 'x', 1e-6)], 0), 'floatingNode', ['C1'], ['x'], /Only C1 \(open at 0 Hz\) leads/);
+    expectProblem(
+      onlyProblem([...rest, capacitor('C1', '9', 'x', 1e-6)], 0),
+      'floatingNode',
+      ['C1'],
+      ['x'],
+      /Only C1 \(open at 0 Hz\) leads/,
+    );
     expectProblem(onlyProblem([...rest, capacitor('C1', '9', 'x', 0)], 50), 'floatingNode', ['C1'], ['x'], /0 F/);
   });
 
@@ -73,14 +90,22 @@ describe('floating nodes', () => {
     const alone = unsolved(solve(network(currentSource('I1', '0', 'x', 1)), { frequency: 50 }));
     expectProblem(alone, 'floatingNode', ['I1'], ['x'], /no way on from node x/);
     const parts = [...rest, resistor('R1', '9', 'y', 1), resistor('R2', 'y', '0', 1), currentSource('I1', 'y', 'x', 1)];
-    expect(unsolved(solve(network(...parts), { frequency: 50 }))).toMatchObject({ kind: 'floatingNode', elements: ['I1'] });
+    expect(unsolved(solve(network(...parts), { frequency: 50 }))).toMatchObject({
+      kind: 'floatingNode',
+      elements: ['I1'],
+    });
     const grounded = solved(solve(network(...rest, currentSource('I1', '0', 'x', 1)), { frequency: 50 }));
     expectClose(grounded.current('R9'), { re: 2, im: 0 }, 1);
     expect(grounded.current('I1')).toBeUndefined();
   });
 
   it('leaves a floating part its own currents', () => {
-    const parts = [...rest, capacitor('C1', '9', 'a', 1e-6), voltageSource('V1', 'a', 'b', 6), resistor('R1', 'a', 'b', 3)];
+    const parts = [
+      ...rest,
+      capacitor('C1', '9', 'a', 1e-6),
+      voltageSource('V1', 'a', 'b', 6),
+      resistor('R1', 'a', 'b', 3),
+    ];
     const solution = solved(solve(network(...parts), { frequency: 0 }));
     expect(solution.problems.map(({ kind }) => kind)).toEqual(['floatingNode']);
     expectClose(solution.current('R1'), { re: 2, im: 0 }, 1);
@@ -114,9 +139,20 @@ describe('loops of given voltages', () => {
   });
 
   it('finds a loop of inductors and a source at 0 Hz, and not above it', () => {
-    const parts = [voltageSource('V1', '1', '0', 10), inductor('L1', '1', '2', 1e-3), inductor('L2', '2', '0', 1e-3), resistor('R1', '2', '0', 1)];
+    const parts = [
+      voltageSource('V1', '1', '0', 10),
+      inductor('L1', '1', '2', 1e-3),
+      inductor('L2', '2', '0', 1e-3),
+      resistor('R1', '2', '0', 1),
+    ];
     const problem = unsolved(solve(network(...parts), { frequency: 0 }));
-    expectProblem(problem, 'voltageLoop', ['V1', 'L1', 'L2'], ['0', '1', '2'], /L1 \(an ideal connection at 0 Hz\).*short-circuits V1/);
+    expectProblem(
+      problem,
+      'voltageLoop',
+      ['V1', 'L1', 'L2'],
+      ['0', '1', '2'],
+      /L1 \(an ideal connection at 0 Hz\).*short-circuits V1/,
+    );
     expect(solved(solve(network(...parts), { frequency: 50 })).problems).toEqual([]);
   });
 
@@ -137,12 +173,19 @@ describe('loops of given voltages', () => {
   });
 
   it('says of a short-circuited source just that', () => {
-    const problem = unsolved(solve(network(voltageSource('V1', '1', '1', 10), resistor('R1', '1', '0', 1)), { frequency: 50 }));
+    const problem = unsolved(
+      solve(network(voltageSource('V1', '1', '1', 10), resistor('R1', '1', '0', 1)), { frequency: 50 }),
+    );
     expectProblem(problem, 'voltageLoop', ['V1'], ['1'], /Voltage source V1 has both ends on node 1.*short/);
   });
 
   it('takes loops that agree but for rounding as agreeing', () => {
-    const parts = [voltageSource('Va', '1', '0', 0.1), voltageSource('Vb', '2', '1', 0.2), voltageSource('Vc', '2', '0', 0.3), resistor('R1', '2', '0', 1)];
+    const parts = [
+      voltageSource('Va', '1', '0', 0.1),
+      voltageSource('Vb', '2', '1', 0.2),
+      voltageSource('Vc', '2', '0', 0.3),
+      resistor('R1', '2', '0', 1),
+    ];
     expect(onlyProblem(parts, 50).message).toMatch(/not determined/);
   });
 });
@@ -176,16 +219,33 @@ describe('resonance exactly at the drive', () => {
   it('says that a lossless series circuit across a source has no bounded response', () => {
     const parts = [voltageSource('V1', '1', '0', 1), inductor('L1', '1', '2', L), capacitor('C1', '2', '0', C)];
     const problem = unsolved(solve(network(...parts), { frequency: f0 }));
-    expectProblem(problem, 'resonance', ['V1', 'L1', 'C1'], ['2'], /L1 and C1 resonate without loss.*grows without bound/);
+    expectProblem(
+      problem,
+      'resonance',
+      ['V1', 'L1', 'C1'],
+      ['2'],
+      /L1 and C1 resonate without loss.*grows without bound/,
+    );
   });
 
   it('says that a lossless parallel circuit on a current source has no bounded response', () => {
     const parts = [currentSource('I1', '0', '1', 1), inductor('L1', '1', '0', L), capacitor('C1', '1', '0', C)];
-    expectProblem(unsolved(solve(network(...parts), { frequency: f0 })), 'resonance', ['L1', 'C1'], ['1'], /resonate without loss/);
+    expectProblem(
+      unsolved(solve(network(...parts), { frequency: f0 })),
+      'resonance',
+      ['L1', 'C1'],
+      ['1'],
+      /resonate without loss/,
+    );
   });
 
   it('solves a lossless series circuit in series with a resistance: only its middle node cancels', () => {
-    const parts = [voltageSource('V1', '1', '0', 10), inductor('L1', '1', '2', L), capacitor('C1', '2', '3', C), resistor('R1', '3', '0', 5)];
+    const parts = [
+      voltageSource('V1', '1', '0', 10),
+      inductor('L1', '1', '2', L),
+      capacitor('C1', '2', '3', C),
+      resistor('R1', '3', '0', 5),
+    ];
     const solution = solved(solve(network(...parts), { frequency: f0 }));
     expect(solution.problems).toEqual([]);
     const impedance = Math.sqrt(L / C);
@@ -194,7 +254,12 @@ describe('resonance exactly at the drive', () => {
   });
 
   it('solves a lossless parallel circuit in parallel with a resistance', () => {
-    const parts = [currentSource('I1', '0', '1', 2), inductor('L1', '1', '0', L), capacitor('C1', '1', '0', C), resistor('R1', '1', '0', 50)];
+    const parts = [
+      currentSource('I1', '0', '1', 2),
+      inductor('L1', '1', '0', L),
+      capacitor('C1', '1', '0', C),
+      resistor('R1', '1', '0', 50),
+    ];
     expectClose(solved(solve(network(...parts), { frequency: f0 })).voltage('1'), { re: 100, im: 0 }, 64);
   });
 
@@ -226,7 +291,13 @@ describe('resonance exactly at the drive', () => {
 describe('other singular equations', () => {
   it('finds a resistance and its negative in parallel on a current source', () => {
     const parts = [currentSource('I1', '0', '1', 1), resistor('R1', '1', '0', 50), resistor('R2', '1', '0', -50)];
-    expectProblem(unsolved(solve(network(...parts), { frequency: 50 })), 'singular', ['R1', 'R2'], ['1'], /no unique solution/);
+    expectProblem(
+      unsolved(solve(network(...parts), { frequency: 50 })),
+      'singular',
+      ['R1', 'R2'],
+      ['1'],
+      /no unique solution/,
+    );
   });
 
   it('sees cancellation that rounding hides: ten tenths against a whole', () => {
@@ -239,7 +310,13 @@ describe('other singular equations', () => {
 describe('values out of range', () => {
   it('names the element whose value cannot be computed with', () => {
     const parts = [voltageSource('V1', '1', '0', 1), resistor('R1', '1', '0', 1e-300)];
-    expectProblem(unsolved(solve(network(...parts), { frequency: 50 })), 'notFinite', ['R1'], ['1', '0'], /power of ten/);
+    expectProblem(
+      unsolved(solve(network(...parts), { frequency: 50 })),
+      'notFinite',
+      ['R1'],
+      ['1', '0'],
+      /power of ten/,
+    );
     const huge = [voltageSource('V1', '1', '0', 1e200), resistor('R1', '1', '0', 1)];
     expect(unsolved(solve(network(...huge), { frequency: 50 }))).toMatchObject({ kind: 'notFinite', elements: ['V1'] });
   });

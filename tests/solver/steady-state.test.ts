@@ -25,7 +25,11 @@ describe('conventions', () => {
   });
 
   it('has a positive reactive power in an inductor and a negative one in a capacitor', () => {
-    const list = network(voltageSource('V1', '1', '0', 10), inductor('L1', '1', '0', 0.1), capacitor('C1', '1', '0', 1e-5));
+    const list = network(
+      voltageSource('V1', '1', '0', 10),
+      inductor('L1', '1', '0', 0.1),
+      capacitor('C1', '1', '0', 1e-5),
+    );
     const solution = solved(solve(list, { frequency: 50 }));
     const omega = 100 * Math.PI;
     expectClose(solution.power('L1'), { re: 0, im: 100 / (omega * 0.1) }, 4);
@@ -56,7 +60,9 @@ describe('conventions', () => {
   });
 
   it('does not answer for names that are not in the list', () => {
-    const solution = solved(solve(network(voltageSource('V1', '1', '0', 1), resistor('R1', '1', '0', 1)), { frequency: 1 }));
+    const solution = solved(
+      solve(network(voltageSource('V1', '1', '0', 1), resistor('R1', '1', '0', 1)), { frequency: 1 }),
+    );
     expect(solution.voltage('7')).toBeUndefined();
     expect(solution.current('R7')).toBeUndefined();
     expect(solution.power('R7')).toBeUndefined();
@@ -96,8 +102,23 @@ describe('sources and their frequencies', () => {
     expectClose(solved(solve(list, { frequency })).voltage('1'), { re: 10, im: 0 }, 0);
   });
 
+  it('has a real direct value, and the limit of an operating source, at 0 Hz', () => {
+    const both = network(
+      voltageSource('V1', '1', '0', 12, 60, 0),
+      voltageSource('V2', '2', '0', 12, 90),
+      resistor('R1', '1', '2', 1),
+    );
+    const solution = solved(solve(both, { frequency: 0 }));
+    expectClose(solution.voltage('1'), { re: 6, im: 0 }, 2);
+    expect(solution.voltage('2')).toMatchObject({ re: 0, im: 12 });
+  });
+
   it('has a direct source at 0 Hz and nowhere else', () => {
-    const direct = network(voltageSource('V1', '1', '0', 12, 0, 0), resistor('R1', '1', '2', 1), resistor('R2', '2', '0', 2));
+    const direct = network(
+      voltageSource('V1', '1', '0', 12, 0, 0),
+      resistor('R1', '1', '2', 1),
+      resistor('R2', '2', '0', 2),
+    );
     expectClose(solved(solve(direct, { frequency: 0 })).voltage('2'), { re: 8, im: 0 }, 2);
     expectClose(solved(solve(direct, { frequency: 50 })).voltage('2'), { re: 0, im: 0 }, 0);
   });
@@ -139,7 +160,12 @@ describe('0 Hz and zero values', () => {
   });
 
   it('has a zero capacitance open', () => {
-    const list = network(voltageSource('V1', '1', '0', 6), resistor('R1', '1', '2', 2), capacitor('C0', '2', '0', 0), resistor('R2', '2', '0', 1));
+    const list = network(
+      voltageSource('V1', '1', '0', 6),
+      resistor('R1', '1', '2', 2),
+      capacitor('C0', '2', '0', 0),
+      resistor('R2', '2', '0', 1),
+    );
     const solution = solved(solve(list, { frequency: 50 }));
     expectClose(solution.voltage('2'), { re: 2, im: 0 }, 1);
     expect(solution.current('C0')).toMatchObject({ re: 0, im: 0 });
@@ -253,11 +279,16 @@ describe('what never happens', () => {
       fc.tuple(pair, value).map(([nodes, inductance]) => ({ kind: 'inductor', nodes, inductance })),
       fc.tuple(pair, source).map(([nodes, given]) => ({ kind: 'voltageSource', nodes, value: given })),
       fc.tuple(pair, source).map(([nodes, given]) => ({ kind: 'currentSource', nodes, value: given })),
-      fc.tuple(pair, fc.constantFrom(0, 1, -1, 2)).map(([nodes, resistance]) => ({ kind: 'resistor', nodes, resistance })),
+      fc
+        .tuple(pair, fc.constantFrom(0, 1, -1, 2))
+        .map(([nodes, resistance]) => ({ kind: 'resistor', nodes, resistance })),
     );
     const list = fc
       .array(element, { maxLength: 9 })
-      .map((parts) => ({ version: 1, elements: parts.map((part, at) => ({ ...part, id: `X${at}` })) as Element[] }) as const);
+      .map(
+        (parts) =>
+          ({ version: 1, elements: parts.map((part, at) => ({ ...part, id: `X${at}` })) as Element[] }) as const,
+      );
     const frequency = fc.oneof(fc.constantFrom(0, 50), fc.double({ min: 0, noNaN: true, noDefaultInfinity: true }));
     fc.assert(
       fc.property(list, frequency, (valid, at) => {
@@ -272,7 +303,9 @@ describe('what never happens', () => {
         return (
           Number.isFinite(result.residual) &&
           Number.isFinite(result.balance.scale) &&
-          readings.every((reading) => reading === undefined || (Number.isFinite(reading.re) && Number.isFinite(reading.im)))
+          readings.every(
+            (reading) => reading === undefined || (Number.isFinite(reading.re) && Number.isFinite(reading.im)),
+          )
         );
       }),
       { seed: 20260106, numRuns: 2000 },

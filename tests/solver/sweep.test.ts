@@ -34,12 +34,19 @@ describe('sweep', () => {
       const [voltage, current, across] = result.traces;
       expect([voltage?.re[place], voltage?.im[place]]).toEqual([one.voltage('3')?.re, one.voltage('3')?.im]);
       expect([current?.re[place], current?.im[place]]).toEqual([one.current('L1')?.re, one.current('L1')?.im]);
-      expect([across?.re[place], across?.im[place]]).toEqual([one.elementVoltage('R1')?.re, one.elementVoltage('R1')?.im]);
+      expect([across?.re[place], across?.im[place]]).toEqual([
+        one.elementVoltage('R1')?.re,
+        one.elementVoltage('R1')?.im,
+      ]);
     }
   });
 
   it('marks where there is no value, and says why and where', () => {
-    const tank = network(voltageSource('V1', '1', '0', 1), inductor('L1', '1', '2', 1e-3), capacitor('C1', '2', '0', 1e-6));
+    const tank = network(
+      voltageSource('V1', '1', '0', 1),
+      inductor('L1', '1', '2', 1e-3),
+      capacitor('C1', '2', '0', 1e-6),
+    );
     const f0 = 1 / (2 * Math.PI * Math.sqrt(1e-9));
     const result = swept([f0 / 2, f0, f0 * 2], [{ quantity: 'voltage', node: '2' }], tank);
     const [trace] = result.traces;
@@ -63,8 +70,14 @@ describe('sweep', () => {
   });
 
   it('refuses outputs that are not in the list', () => {
-    expect(sweep(list, { frequencies: [1], outputs: [{ quantity: 'voltage', node: 'x' }] })).toMatchObject({ ok: false, kind: 'invalid' });
-    expect(sweep(list, { frequencies: [1], outputs: [{ quantity: 'current', element: 'x' }] })).toMatchObject({ ok: false, kind: 'invalid' });
+    expect(sweep(list, { frequencies: [1], outputs: [{ quantity: 'voltage', node: 'x' }] })).toMatchObject({
+      ok: false,
+      kind: 'invalid',
+    });
+    expect(sweep(list, { frequencies: [1], outputs: [{ quantity: 'current', element: 'x' }] })).toMatchObject({
+      ok: false,
+      kind: 'invalid',
+    });
   });
 
   it('takes no frequencies for no values', () => {

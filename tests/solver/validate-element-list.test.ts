@@ -26,7 +26,11 @@ const REFUSED: readonly (readonly [string, unknown, RegExp])[] = [
   ['a source without value', { version: 1, elements: [{ ...V1, value: null }] }, /V1 needs a value/],
   ['no rms', { version: 1, elements: [{ ...V1, value: { phase: 0, frequency: null } }] }, /rms/],
   ['no phase', { version: 1, elements: [{ ...V1, value: { rms: 1, frequency: null } }] }, /degrees/],
-  ['a negative frequency', { version: 1, elements: [{ ...V1, value: { rms: 1, phase: 0, frequency: -1 } }] }, /frequency/],
+  [
+    'a negative frequency',
+    { version: 1, elements: [{ ...V1, value: { rms: 1, phase: 0, frequency: -1 } }] },
+    /frequency/,
+  ],
   ['no frequency', { version: 1, elements: [{ ...V1, value: { rms: 1, phase: 0 } }] }, /frequency/],
   ['too many elements', { version: 1, elements: Array.from({ length: 20_001 }, () => R1) }, /more than 20000/],
 ];
@@ -43,7 +47,10 @@ describe('validateElementList', () => {
     expect(result.ok).toBe(false);
     if (!result.ok) expect(result.message).toMatch(words);
     expect(solve(value as ElementList, { frequency: 50 })).toMatchObject({ ok: false, kind: 'invalid' });
-    expect(sweep(value as ElementList, { frequencies: [50], outputs: [] })).toMatchObject({ ok: false, kind: 'invalid' });
+    expect(sweep(value as ElementList, { frequencies: [50], outputs: [] })).toMatchObject({
+      ok: false,
+      kind: 'invalid',
+    });
   });
 
   it('never throws, whatever comes in', () => {

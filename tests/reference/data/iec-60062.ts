@@ -18,10 +18,10 @@ export const RESISTOR_CODES: readonly (readonly [string, number])[] = [
 
 export const CAPACITOR_CODES: readonly (readonly [string, number])[] = [
   ['10p', 1e-11],
-  ['4n7', 4.7e-09],
-  ['1u0', 1e-06],
+  ['4n7', 4.7e-9],
+  ['1u0', 1e-6],
   ['p33', 3.3e-13],
-  ['100n', 1e-07],
+  ['100n', 1e-7],
 ];
 
 /** Per cent on both sides. */

@@ -49,6 +49,10 @@ function div(a: Big, b: Big): Big {
 function size(a: Big): BigNumber {
   return a.re.times(a.re).plus(a.im.times(a.im)).sqrt();
 }
+/** The size as a double, good enough for a condition. */
+function roughSize(a: Big): number {
+  return Math.hypot(a.re.toNumber(), a.im.toNumber());
+}
 function isZero(a: Big): boolean {
   return a.re.isZero() && a.im.isZero();
 }
@@ -84,7 +88,9 @@ function admittance(element: Element, omega: BigNumber): Big | undefined {
 
 function phasor(element: Element): Big {
   if (element.kind !== 'voltageSource' && element.kind !== 'currentSource') throw new Error('not a source');
-  const angle = exact(element.value.phase).times(math.pi as unknown as BigNumber).div(180);
+  const angle = exact(element.value.phase)
+    .times(math.pi as unknown as BigNumber)
+    .div(180);
   const rms = exact(element.value.rms);
   return big(rms.times(angle.cos()), rms.times(angle.sin()));
 }
@@ -128,51 +134,68 @@ export function solveExactly(list: ElementList, frequency: number): ExactSolutio
   const inverse = invert(matrix);
   const x = inverse.map((line) => line.reduce((sum, entry, k) => add(sum, mul(entry, right[k] ?? NOTHING)), NOTHING));
 
-  /** H = cᵀx + direct, with c given as coefficients of x; `own` is the part of p·∂H/∂p that comes through c itself. */
-  const output = (c: readonly Big[], direct: Big, own: (element: Element) => Big): ExactOutput => {
+  /** y·v of each admittance, and the phasor of each source: p·∂H/∂p is this times the adjoint's voltage or current. */
+  const flows = elements.map((element) => {
+    const y = admittance(element, omega);
+    const [a, b] = [at(element.nodes[0]), at(element.nodes[1])];
+    return y === undefined
+      ? phasor(element)
+      : mul(y, sub(a < 0 ? NOTHING : (x[a] ?? NOTHING), b < 0 ? NOTHING : (x[b] ?? NOTHING)));
+  });
+  const sizes = flows.map(roughSize);
+
+  /** H = cᵀx + direct, with c given as coefficients of x; `through` is the element whose own admittance c holds. */
+  const output = (c: readonly Big[], direct: Big, through?: Element): ExactOutput => {
     const adjoint = matrix.map((_, column) =>
-      c.reduce((sum, entry, row) => (isZero(entry) ? sum : add(sum, mul(entry, inverse[row]?.[column] ?? NOTHING))), NOTHING),
+      c.reduce(
+        (sum, entry, row) => (isZero(entry) ? sum : add(sum, mul(entry, inverse[row]?.[column] ?? NOTHING))),
+        NOTHING,
+      ),
     );
     const value = c.reduce((sum, entry, k) => add(sum, mul(entry, x[k] ?? NOTHING)), direct);
     const between = (of: readonly Big[], a: number, b: number): Big =>
       sub(a < 0 ? NOTHING : (of[a] ?? NOTHING), b < 0 ? NOTHING : (of[b] ?? NOTHING));
-    let total = ZERO;
-    for (const element of elements) {
+    let total = 0;
+    for (const [k, element] of elements.entries()) {
       const [a, b] = [at(element.nodes[0]), at(element.nodes[1])];
-      const y = admittance(element, omega);
-      let change: Big;
-      if (y !== undefined) change = minus(mul(y, mul(between(x, a, b), between(adjoint, a, b))));
-      else if (element.kind === 'voltageSource') change = mul(phasor(element), adjoint[nodes.length + sources.indexOf(element)] ?? NOTHING);
-      else change = minus(mul(phasor(element), between(adjoint, a, b)));
-      total = total.plus(size(add(change, own(element))));
+      if (element === through) {
+        total += size(minus(mul(flows[k] ?? NOTHING, sub(between(adjoint, a, b), big(ONE, ZERO))))).toNumber();
+      } else if (element.kind === 'voltageSource') {
+        total +=
+          sizes[k] === undefined
+            ? 0
+            : sizes[k] * roughSize(adjoint[nodes.length + sources.indexOf(element)] ?? NOTHING);
+      } else {
+        total += (sizes[k] ?? 0) * roughSize(between(adjoint, a, b));
+      }
     }
     const magnitude = size(value);
     return {
       re: value.re.toNumber(),
       im: value.im.toNumber(),
-      condition: magnitude.isZero() ? Infinity : total.div(magnitude).toNumber(),
+      condition: magnitude.isZero() ? Infinity : total / magnitude.toNumber(),
       errorOf: (of) => {
         const off = size(sub(big(exact(of.re), exact(of.im)), value));
         return (magnitude.isZero() ? off : off.div(magnitude)).toNumber();
       },
     };
   };
-  const unit = (index: number, value: Big): Big[] => Array.from({ length: order }, (_, k) => (k === index ? value : NOTHING));
+  const unit = (index: number, value: Big): Big[] =>
+    Array.from({ length: order }, (_, k) => (k === index ? value : NOTHING));
 
   return {
-    voltage: (node) => output(unit(at(node), big(ONE, ZERO)), NOTHING, () => NOTHING),
+    voltage: (node) => output(unit(at(node), big(ONE, ZERO)), NOTHING),
     current: (id) => {
       const element = elements.find((candidate) => candidate.id === id);
       if (element === undefined) throw new Error(`no element ${id}`);
       if (element.kind === 'voltageSource') {
-        return output(unit(nodes.length + sources.indexOf(element), big(ONE, ZERO)), NOTHING, () => NOTHING);
+        return output(unit(nodes.length + sources.indexOf(element), big(ONE, ZERO)), NOTHING);
       }
-      if (element.kind === 'currentSource') return output(unit(-1, NOTHING), phasor(element), () => NOTHING);
+      if (element.kind === 'currentSource') return output(unit(-1, NOTHING), phasor(element));
       const y = admittance(element, omega) ?? NOTHING;
       const [a, b] = [at(element.nodes[0]), at(element.nodes[1])];
       const c = Array.from({ length: order }, (_, k) => (k === a ? y : k === b ? minus(y) : NOTHING));
-      const through = mul(y, sub(a < 0 ? NOTHING : (x[a] ?? NOTHING), b < 0 ? NOTHING : (x[b] ?? NOTHING)));
-      return output(c, NOTHING, (candidate) => (candidate === element ? through : NOTHING));
+      return output(c, NOTHING, element);
     },
   };
 }

@@ -18,9 +18,10 @@ export function expectClose(actual: ComplexLike | undefined, expected: ComplexLi
   if (actual === undefined) return;
   const off = Math.hypot(actual.re - expected.re, actual.im - expected.im);
   const size = Math.hypot(expected.re, expected.im) || 1;
-  expect(off / (size * Number.EPSILON), `${actual.re} + j${actual.im} against ${expected.re} + j${expected.im}`).toBeLessThanOrEqual(
-    units,
-  );
+  expect(
+    off / (size * Number.EPSILON),
+    `${actual.re} + j${actual.im} against ${expected.re} + j${expected.im}`,
+  ).toBeLessThanOrEqual(units);
 }
 
 /** Narrows to a solution, with the problem's words if it is none. */
