@@ -1,5 +1,5 @@
 import type { SheetDocument } from '../document/types';
-import type { ReadingConvention } from './format-reading';
+import { withoutRounding, type ReadingConvention } from './format-reading';
 import { angleDegrees, magnitude, type Phasor } from './phasor';
 import type { Readings } from './readings';
 
@@ -43,7 +43,12 @@ export function compareNames(a: string, b: string): number {
  * any other phasor its magnitude and angle, in whichever form it is shown.
  */
 export function figuresOf(phasor: Phasor, quantity: ReadingQuantity, convention: ReadingConvention): readonly [number, number] {
-  if (quantity === 'power' || convention === 'direct') return [phasor.re, phasor.im];
+  if (quantity === 'power') {
+    // As it is shown: what rounding left must not decide the order of zeros.
+    const { re, im } = withoutRounding(phasor);
+    return [re, im];
+  }
+  if (convention === 'direct') return [phasor.re, phasor.im];
   return [magnitude(phasor), angleDegrees(phasor)];
 }
 

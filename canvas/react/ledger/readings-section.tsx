@@ -33,8 +33,10 @@ export function ReadingsSection() {
   const [quantity, setQuantity] = useState<ReadingQuantity>('current');
   const [filter, setFilter] = useState('');
   const [order, setOrder] = useState<ReadingOrder>({ by: 'name', descending: false });
+  // Powers are the same in every convention.
+  const words = quantity === 'power' && !isDirect ? 'active, reactive' : conventionWords(isDirect ? 'direct' : convention);
   return (
-    <LedgerSection name="readings" title="Readings" aside={conventionWords(isDirect ? 'direct' : convention)}>
+    <LedgerSection name="readings" title="Readings" aside={words}>
       <div className="flex flex-col gap-1.5">
         <Segmented label="Quantity" options={QUANTITIES} value={quantity} onValueChange={setQuantity} wide />
         <FilterAndCopy filter={filter} onFilter={setFilter} />

@@ -39,6 +39,11 @@ describe('the order of lines', () => {
     expect(names(orderRows(rows, { by: 'second', descending: false }, 'power', POLAR))).toEqual(['R1', 'R3', 'R10', 'R2']);
     expect(names(orderRows(rows, { by: 'first', descending: false }, 'current', 'direct'))).toEqual(['R3', 'R1', 'R10', 'R2']);
   });
+
+  it('does not let what rounding left of a power decide between zeros', () => {
+    const lossless = [row('L1', 1e-18, 1), row('C1', -1e-18, -1), row('R1', 2)];
+    expect(names(orderRows(lossless, { by: 'first', descending: true }, 'power', POLAR))).toEqual(['R1', 'C1', 'L1']);
+  });
 });
 
 describe('filtering', () => {
