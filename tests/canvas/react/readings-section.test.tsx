@@ -112,7 +112,7 @@ describe('the table of readings', () => {
 });
 
 describe('folding', () => {
-  it('takes a section away until it is opened again, also after the page is left', async () => {
+  it('takes a section away until it is opened again, and notes that on this machine', async () => {
     const room = openLadder();
     const heading = screen.getByRole('button', { name: /^Readings/ });
     await room.user.click(heading);
