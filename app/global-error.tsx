@@ -1,14 +1,13 @@
 'use client';
 
 import './globals.css';
-import { fontVariables } from './fonts';
 import { MessagePage } from './_frame/message-page';
 import { Button } from '@/components/button';
 
 /** When even the frame of the page cannot be made; so it brings its own. */
 export default function GlobalError({ error }: { readonly error: Error & { readonly digest?: string } }) {
   return (
-    <html lang="en" className={fontVariables}>
+    <html lang="en">
       <body className="bg-paper text-ink antialiased">
         <title>Ohmstead: this page could not be made</title>
         <MessagePage

@@ -1,5 +1,4 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
 import { BrokenWire } from './_frame/broken-wire';
 import { MessagePage } from './_frame/message-page';
 import { buttonStyle } from '@/components/button-style';
@@ -12,9 +11,9 @@ export default function NotFound() {
       picture={<BrokenWire />}
       title="There is nothing at this address"
       action={
-        <Link href="/sheets" className={buttonStyle('primary', 'large')}>
-          Go to the sheets
-        </Link>
+        <form action="/sheets">
+          <button className={buttonStyle('primary', 'large')}>Go to the sheets</button>
+        </form>
       }
     >
       It was never there, it is another team’s, or the link lost a piece on its way. Look for the sheet in the list, or

@@ -1,4 +1,3 @@
-import Link from 'next/link';
 import type { ReactNode } from 'react';
 import { Wordmark } from '@/components/logo';
 
@@ -11,14 +10,15 @@ export type MessagePageProps = {
   readonly small?: ReactNode;
 };
 
-/** A page that only says something: what is wrong, and the way on. */
+/**
+ * A page that only says something: what is wrong, and the way on. Every page carries those that may have to take its
+ * place, so they are made of little: no link component, no typeface, no icons.
+ */
 export function MessagePage({ picture, title, children, action, small }: MessagePageProps) {
   return (
     <div className="grid-paper flex min-h-dvh flex-col items-center px-5 pt-[max(5vh,1.5rem)] pb-10">
-      <header>
-        <Link href="/" className="inline-block rounded-md p-1">
-          <Wordmark />
-        </Link>
+      <header className="p-1">
+        <Wordmark />
       </header>
       <main className="flex w-full max-w-[560px] flex-1 flex-col items-center justify-center pb-[8vh] text-center">
         {picture !== undefined && <div className="mb-7">{picture}</div>}
