@@ -1,6 +1,8 @@
 import type { Element, ElementList } from '@/solver';
 import { pinKey, pinsOf } from '../document/lookup';
-import type { PartId, SheetDocument } from '../document/types';
+import type { Part, PartId, SheetDocument } from '../document/types';
+import type { PartValues } from '../parts/definition';
+import { readFrequency } from '../parts/read-values';
 import { definitionOf } from '../parts/registry';
 import { findNodes, type Nodes } from './nodes';
 
@@ -24,11 +26,13 @@ export function buildNetwork(document: SheetDocument): Network {
   const partOfElement = new Map<string, PartId>();
   const elementOfPart = new Map<PartId, Element>();
   const unreadable: UnreadableField[] = [];
+  const operating = readFrequency(document.operatingFrequency);
+  const direct = operating.ok && operating.value === 0;
   for (const part of document.parts) {
     const definition = definitionOf(part.kind);
     if (!definition.element) continue;
     const pinNodes = pinsOf(part).map((pin) => nodes.byPin.get(pinKey(pin.ref))?.name ?? '');
-    const outcome = definition.element(part.designator, pinNodes, part.values);
+    const outcome = definition.element(part.designator, pinNodes, direct ? atDirectCurrent(part) : part.values);
     if (!outcome.ok) {
       unreadable.push({ part: part.id, field: outcome.field, message: outcome.message });
       continue;
@@ -38,4 +42,12 @@ export function buildNetwork(document: SheetDocument): Network {
     elementOfPart.set(part.id, outcome.element);
   }
   return { list: { version: 1, elements }, nodes, partOfElement, elementOfPart, unreadable };
+}
+
+/**
+ * At an operating frequency of 0 Hz a source that follows it delivers its amplitude as a direct value, just as one whose
+ * own frequency is 0 Hz: there is no peak, no rms and no phase to tell apart.
+ */
+function atDirectCurrent(part: Part): PartValues {
+  return part.values['frequency'] === '' ? { ...part.values, frequency: '0 Hz' } : part.values;
 }

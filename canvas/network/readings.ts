@@ -51,21 +51,17 @@ export type Readings = {
  */
 const BALANCE_BOUND = 1e-9;
 
-/** The operating frequency in hertz; what cannot be read counts as 0 and is reported as a problem. */
-export function operatingFrequencyHz(document: Pick<SheetDocument, 'operatingFrequency'>): number {
-  const read = readFrequency(document.operatingFrequency);
-  return read.ok ? read.value : 0;
-}
-
 /** Drawing to readings: builds the network, solves it at the operating frequency, and finds what needs saying. */
 export function readNetwork(document: SheetDocument): Readings {
-  const frequencyHz = operatingFrequencyHz(document);
+  const frequency = readFrequency(document.operatingFrequency);
+  const frequencyHz = frequency.ok ? frequency.value : 0;
   const network = buildNetwork(document);
   const noted = drawingProblems(document, network);
   const nothing = { frequencyHz, parts: new Map(), nodes: new Map(), deadSources: [], cautions: [], balance: null, network };
 
   // A part that cannot be read is a hole of unknown size: no figure of the sheet could be stood behind.
-  if (network.unreadable.length > 0 || network.list.elements.length === 0) return { ...nothing, problems: noted };
+  const readable = frequency.ok && network.unreadable.length === 0;
+  if (!readable || network.list.elements.length === 0) return { ...nothing, problems: noted };
 
   const answer = solve(network.list, { frequency: frequencyHz });
   const cautions = findCautions(network, frequencyHz, answer.ok ? answer : null);

@@ -60,7 +60,11 @@ function Bench({
 }: WorkbenchProps) {
   const surface = useRef<HTMLDivElement>(null);
   const screen = useScreen(store, surface);
-  const [raised, setRaised] = useState(false);
+  const [pulledUp, setPulledUp] = useState(false);
+  // Asked from the drawing, the problems must come into view on a phone too.
+  const asked = useSheet((state) => state.panel === 'problems');
+  if (asked && !pulledUp) setPulledUp(true);
+  const raised = pulledUp || asked;
   usePrint(surface);
   return (
     <ScreenContext.Provider value={screen}>
@@ -83,7 +87,7 @@ function Bench({
           <button
             type="button"
             aria-expanded={raised}
-            onClick={() => setRaised(!raised)}
+            onClick={() => setPulledUp(!raised)}
             className="workbench-grip h-11 w-full shrink-0 items-center justify-between px-4 text-[14px] font-semibold"
           >
             Ledger

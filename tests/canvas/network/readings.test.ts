@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { SheetDocument } from '@/canvas/document/types';
 import { angleDegrees, magnitude } from '@/canvas/network/phasor';
-import { operatingFrequencyHz, readNetwork } from '@/canvas/network/readings';
+import { readNetwork } from '@/canvas/network/readings';
 import { anySheet } from '../../support/arbitrary-sheets';
 import { dividerSheet, ladderSheet } from '../../support/sample-sheets';
 import { SheetBuilder } from '../../support/sheet-builder';
@@ -46,6 +46,21 @@ describe('the readings of a sheet', () => {
     expect(balance?.ratio).toBeLessThan(60 * Number.EPSILON);
   });
 
+  it('take the amplitude for the direct value at 0 Hz, whether that is the source’s own frequency or the operating one', () => {
+    const values = { amplitude: '10', measure: 'peak', wave: 'sine', phase: '30' };
+    const own = readNetwork({ ...withValues(dividerSheet(), 'voltageSource-1', { ...values, frequency: '0 Hz' }), operatingFrequency: '0 Hz' });
+    const following = readNetwork({ ...withValues(dividerSheet(), 'voltageSource-1', values), operatingFrequency: '0 Hz' });
+    expect(own.parts.get('voltageSource-1')?.voltage).toEqual({ re: 10, im: 0 });
+    expect(following.parts.get('voltageSource-1')?.voltage).toEqual({ re: 10, im: 0 });
+    expect(following.deadSources).toEqual([]);
+  });
+
+  it('are withheld while the operating frequency cannot be read, and the reason is said', () => {
+    const { parts, nodes, problems } = readNetwork({ ...dividerSheet(), operatingFrequency: 'often' });
+    expect([parts.size, nodes.size]).toEqual([0, 0]);
+    expect(problems[0]?.message).toMatch(/^Operating frequency: /);
+  });
+
   it('of a network at rest balance too', () => {
     const { balance, problems } = readNetwork(withValues(dividerSheet(), 'voltageSource-1', { amplitude: '0' }));
     expect(balance).toEqual({ ratio: 0, holds: true });
@@ -53,8 +68,9 @@ describe('the readings of a sheet', () => {
   });
 
   it('are those at the operating frequency, in hertz or radians a second', () => {
-    expect(operatingFrequencyHz({ operatingFrequency: '2 kHz' })).toBe(2000);
-    expect(operatingFrequencyHz({ operatingFrequency: '314.1592653589793 rad/s' })).toBeCloseTo(50, 12);
+    const at = (operatingFrequency: string) => readNetwork({ ...dividerSheet(), operatingFrequency }).frequencyHz;
+    expect(at('2 kHz')).toBe(2000);
+    expect(at('314.1592653589793 rad/s')).toBeCloseTo(50, 12);
     const sheet = new SheetBuilder();
     const source = sheet.part('voltageSource', 0, 0, { turn: 90 });
     const resistor = sheet.resistor(100, -100, '1k');
