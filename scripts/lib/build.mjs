@@ -22,6 +22,7 @@ const notBuilt = new Set([
   'README.md',
   'DEVELOPERS.md',
   'coverage',
+  'docs',
   'next-env.d.ts',
   'node_modules',
   'playwright-report',

@@ -1,6 +1,12 @@
 // @ts-check
+import { statfsSync } from 'node:fs';
+import { tailOf } from './logs.mjs';
+import { shown } from './paths.mjs';
+import { Failure } from './say.mjs';
 
-export const diskFull = 'the disk is full; free some space and run this again';
+/** @typedef {import('./paths.mjs').Layout} Layout */
+
+const diskFull = 'the disk is full; free some space and run this again';
 
 /**
  * Why MariaDB ended, out of what it wrote to its error log: `port` when its port was taken meanwhile (which is tried
@@ -29,4 +35,25 @@ export function reasonIn(log) {
     return { kind: 'other', clause: first.replace(/^.*?\[ERROR\]\s*/, '').replace(/\.?\s*$/, '') };
   }
   return { kind: 'other', clause: 'it ended without giving a reason' };
+}
+
+/**
+ * @param {Layout} layout
+ * @param {number} logStart size of the log before the attempt
+ * @returns {ReturnType<typeof reasonIn>}
+ */
+export function reasonFor(layout, logStart) {
+  const reason = reasonIn(tailOf(layout.databaseLog, logStart));
+  const { bavail, bsize } = statfsSync(layout.dir);
+  // The log lies on the same disk, and a full one has no room for the line that would say so.
+  const full = bavail * bsize < 4_000_000;
+  return reason.kind === 'other' && full ? { kind: 'other', clause: diskFull } : reason;
+}
+
+/**
+ * @param {string} clause
+ * @param {Layout} layout
+ */
+export function cannotStart(clause, layout) {
+  return new Failure(`MariaDB could not be started: ${clause} (its log is ${shown(layout.databaseLog)}).`);
 }

@@ -1,29 +1,14 @@
 // @ts-check
-import {
-  closeSync,
-  createReadStream,
-  existsSync,
-  mkdirSync,
-  openSync,
-  readdirSync,
-  renameSync,
-  rmSync,
-  statfsSync,
-  writeFileSync,
-} from 'node:fs';
+import { closeSync, mkdirSync, openSync, rmSync, writeFileSync } from 'node:fs';
 import net from 'node:net';
-import os from 'node:os';
 import path from 'node:path';
-import { Readable } from 'node:stream';
-import { pipeline } from 'node:stream/promises';
 import { setTimeout as wait } from 'node:timers/promises';
-import { rotate, sizeOf, tailOf } from './logs.mjs';
-import { diskFull, reasonIn } from './mariadb-log.mjs';
-import { mariadbServer, systemTableFiles } from './mariadb-programs.mjs';
-import { shown } from './paths.mjs';
+import { rotate, sizeOf } from './logs.mjs';
+import { asRoot, makeDataDirectory, sizes } from './mariadb-data.mjs';
+import { cannotStart, reasonFor } from './mariadb-log.mjs';
+import { mariadbServer } from './mariadb-programs.mjs';
 import { freePort, rememberedPort } from './ports.mjs';
 import { ended, launch, livePidIn, signalGroup, stopChild, stopPid } from './processes.mjs';
-import { Failure } from './say.mjs';
 import { stopLater } from './shutdown.mjs';
 
 /** @typedef {import('./paths.mjs').Layout} Layout */
@@ -46,7 +31,7 @@ import { stopLater } from './shutdown.mjs';
 const account = { name: 'app', host: '127.0.0.1' };
 
 /**
- * A clean stop writes the changed pages and takes two seconds here; what is killed instead loses nothing (InnoDB
+ * A clean stop writes the changed pages, mostly in less than a second; what is killed instead loses nothing (InnoDB
  * recovers it at the next start), so waiting longer than this helps nobody.
  */
 const stopGraceMs = 10_000;
@@ -63,12 +48,6 @@ const strictMode = [
   'NO_ENGINE_SUBSTITUTION',
 ].join(',');
 
-/** The options that hold for making the data directory and for serving it. */
-const sizes = ['--innodb-buffer-pool-size=128M', '--innodb-log-file-size=32M'];
-
-/** MariaDB refuses to run as root unless told to; any other account it runs as is its own. */
-const asRoot = () => (process.getuid?.() === 0 ? ['--user=root'] : []);
-
 /**
  * Starts the private server of a state folder on loopback, with its own data directory, socket and account; makes what
  * is not there yet. Nobody else may be doing the same for that folder: the caller holds its lock.
@@ -79,7 +58,7 @@ const asRoot = () => (process.getuid?.() === 0 ? ['--user=root'] : []);
  * @param {readonly string[]} wanted.databases made when they are missing, all of them the account's
  * @param {number} wanted.preferredPort
  * @returns {Promise<PrivateMariadb>}
- * @throws {Failure} with the reason in one sentence when it cannot be started
+ * @throws {import('./say.mjs').Failure} with the reason in one sentence when it cannot be started
  */
 export async function startMariadb({ layout, password, databases, preferredPort }) {
   const server = mariadbServer();
@@ -112,27 +91,6 @@ export async function startMariadb({ layout, password, databases, preferredPort 
 }
 
 /**
- * @param {string} clause
- * @param {Layout} layout
- */
-function cannotStart(clause, layout) {
-  return new Failure(`MariaDB could not be started: ${clause} (its log is ${shown(layout.databaseLog)}).`);
-}
-
-/**
- * @param {Layout} layout
- * @param {number} logStart size of the log before the attempt
- * @returns {ReturnType<typeof reasonIn>}
- */
-function reasonFor(layout, logStart) {
-  const reason = reasonIn(tailOf(layout.databaseLog, logStart));
-  const { bavail, bsize } = statfsSync(layout.dir);
-  // The log lies on the same disk, and a full one has no room for the line that would say so.
-  const full = bavail * bsize < 4_000_000;
-  return reason.kind === 'other' && full ? { kind: 'other', clause: diskFull } : reason;
-}
-
-/**
  * A server of this data directory whose starter was killed is shutting down by itself, or, where the kernel did not
  * tell it, still runs. It is waited for, then ended; a process number that now belongs to something else is left alone.
  *
@@ -144,77 +102,6 @@ async function endForerunner(server, layout) {
   const pid = livePidIn(layout.databasePid, identity);
   if (pid !== null) await stopPid(pid, stopGraceMs);
   rmSync(layout.databasePid, { force: true });
-}
-
-/**
- * Makes the data directory when there is none, beside its place and moved there when whole, so that a run that was
- * killed half-way leaves nothing that looks like one. The server is fed Debian's own SQL files directly: the script
- * that would do it breaks on spaces in paths and, as root, changes the owner of files of the system's MariaDB.
- *
- * @param {string} server
- * @param {Layout} layout
- * @returns {Promise<boolean>} whether it was made now
- */
-async function makeDataDirectory(server, layout) {
-  if (existsSync(path.join(layout.data, 'mysql'))) return false;
-  if (existsSync(layout.data) && readdirSync(layout.data).length > 0) {
-    throw new Failure(`${shown(layout.data)} is there but is no data directory of MariaDB's; move it away and run this again.`);
-  }
-  const unfinished = `${layout.data}.unfinished`;
-  rmSync(unfinished, { recursive: true, force: true });
-  mkdirSync(unfinished, { recursive: true, mode: 0o700 });
-
-  const logStart = sizeOf(layout.databaseLog);
-  const log = openSync(layout.databaseLog, 'a', 0o600);
-  const child = launch(
-    server,
-    [
-      '--no-defaults',
-      '--bootstrap',
-      ...asRoot(),
-      `--datadir=${unfinished}`,
-      ...sizes,
-      '--log-warnings=0',
-      '--enforce-storage-engine=',
-      '--max-allowed-packet=8M',
-      '--net-buffer-length=16K',
-    ],
-    { cwd: layout.dir, env: process.env, stdio: ['pipe', log, log], deathSignal: 'KILL' },
-  );
-  closeSync(log);
-  const end = ended(child);
-  if (child.stdin !== null) {
-    // A server that ends early closes its end; the reason is in its log and not in this error.
-    await pipeline(Readable.from(bootstrapText()), child.stdin).catch(() => {});
-  }
-  const { code } = await end;
-  if (code !== 0) {
-    rmSync(unfinished, { recursive: true, force: true });
-    const reason = reasonFor(layout, logStart);
-    throw cannotStart(reason.kind === 'other' ? reason.clause : 'its port was taken', layout);
-  }
-  rmSync(layout.data, { recursive: true, force: true });
-  renameSync(unfinished, layout.data);
-  return true;
-}
-
-async function* bootstrapText() {
-  yield 'create database if not exists mysql;\nuse mysql;\n';
-  // The server's own administrator is this system account over the socket, without a password that could leak.
-  yield `set @auth_root_socket='${systemAccount()}';\n`;
-  for (const file of systemTableFiles()) {
-    yield* createReadStream(file);
-    yield '\n';
-  }
-}
-
-function systemAccount() {
-  try {
-    return os.userInfo().username.replace(/[^\w.-]/g, '');
-  } catch {
-    // An account number without a name, as in some containers; nobody then administers by the socket.
-    return 'root';
-  }
 }
 
 /**
@@ -257,7 +144,7 @@ async function choosePort(layout, preferred, refused) {
  * @param {Layout} layout
  * @param {number} port
  * @param {string} statements
- * @returns {Promise<{ kind: 'runs', child: ChildProcess } | ReturnType<typeof reasonIn>>}
+ * @returns {Promise<{ kind: 'runs', child: ChildProcess } | ReturnType<typeof reasonFor>>}
  */
 async function tryStart(server, layout, port, statements) {
   const opening = path.join(layout.dir, 'db.opening.sql');
