@@ -55,7 +55,7 @@ export function SheetRow({ sheet, may, actions, renaming }: SheetRowProps) {
             from{' '}
             <AheadLink
               href={`/sheets/${sheet.origin.sheetId}`}
-              className="relative z-10 inline-block min-h-6 text-voltage underline decoration-voltage/40 underline-offset-2 hover:decoration-voltage"
+              className="relative z-10 inline-block min-h-6 -outline-offset-2 text-voltage underline decoration-voltage/40 underline-offset-2 hover:decoration-voltage"
             >
               {sheet.origin.sheetName}
             </AheadLink>
