@@ -1,10 +1,9 @@
 'use client';
 
-import { findPin, partsById } from '../../document/lookup';
+import { bodyOf, findPin, partsById } from '../../document/lookup';
 import type { NoteAnchor, NoteClass } from '../../document/notes';
 import type { SheetDocument } from '../../document/types';
-import type { Point } from '../../geometry/point';
-import { bodyOf } from '../../document/lookup';
+import { samePoint, type Point } from '../../geometry/point';
 import { useSheet } from '../sheet-context';
 
 /** A note as the drawing shows it. */
@@ -27,8 +26,12 @@ export function anchorPlace(document: SheetDocument, anchor: NoteAnchor): Point 
       const body = bodyOf(part);
       return { x: body.right - 4, y: body.top };
     }
-    case 'node':
-      return findPin(document, anchor)?.at ?? anchor.at;
+    case 'node': {
+      const at = findPin(document, anchor)?.at ?? anchor.at;
+      // A node's name stands above it; the note stands on the name.
+      const named = document.parts.some((part) => part.kind === 'nodeName' && samePoint(part.at, at));
+      return named ? { x: at.x, y: at.y - 54 } : at;
+    }
     case 'place':
       return anchor.at;
   }
