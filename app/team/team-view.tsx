@@ -80,9 +80,9 @@ export function TeamView({ first, may }: TeamViewProps) {
       )}
       <ul role="list" className="border-t border-rule">
         {members.map((member) => (
-          <li key={member.id} className="flex flex-wrap items-center gap-x-3 gap-y-2 border-b border-rule py-3">
+          <li key={member.id} className="flex flex-wrap items-center gap-x-3 gap-y-2 border-b border-rule py-3 sm:flex-nowrap">
             <Avatar name={member.name} size="medium" decorative />
-            <div className="min-w-0 flex-1 basis-48">
+            <div className="min-w-0 flex-1 max-sm:basis-[calc(100%-3rem)]">
               <p className="truncate text-[15px] font-semibold">
                 {member.name}
                 {member.self && <span className="font-normal text-muted"> (you)</span>}
@@ -102,10 +102,10 @@ export function TeamView({ first, may }: TeamViewProps) {
                 options={OPTIONS}
                 value={member.role}
                 onValueChange={(role) => void setRole(member, role)}
-                className="w-34"
+                className="w-34 max-sm:ml-12"
               />
             ) : (
-              <span className="text-sm text-muted">{ROLE_NAMES[member.role]}</span>
+              <span className="text-sm text-muted max-sm:ml-12">{ROLE_NAMES[member.role]}</span>
             )}
             {may.removeMember && (
               <IconButton
