@@ -14,7 +14,7 @@ test('sheets are found, ordered, renamed, cloned, put away and taken out again',
   await page.getByRole('combobox', { name: 'Order' }).selectOption({ label: 'Name' });
   await expect(list.sheets).toHaveText(['Anti-alias filter', 'Bias divider', 'Crossover']);
   // By its purpose as well as by its name.
-  await page.keyboard.press('/');
+  await page.keyboard.press('Control+k');
   await page.keyboard.type('weir');
   await expect(list.sheets).toHaveText(['Anti-alias filter']);
   await page.keyboard.press('Escape');

@@ -17,7 +17,8 @@ export function ListToolbar({ query, onChange }: ListToolbarProps) {
 
   useEffect(() => {
     const onKeyDown = (event: KeyboardEvent): void => {
-      if (event.key !== '/' || event.ctrlKey || event.metaKey || event.altKey || isTyping(event.target)) return;
+      // With Ctrl or ⌘, since a single key that works everywhere could be set off by dictation (WCAG 2.1.4).
+      if (event.key.toLowerCase() !== 'k' || !(event.ctrlKey || event.metaKey) || event.altKey) return;
       event.preventDefault();
       search.current?.focus();
       search.current?.select();
@@ -53,7 +54,7 @@ export function ListToolbar({ query, onChange }: ListToolbarProps) {
         trail={
           query.search === '' && (
             <span className="pointer-events-none pr-1.5 max-sm:hidden">
-              <Kbd>/</Kbd>
+              <Kbd>Ctrl K</Kbd>
             </span>
           )
         }
@@ -78,8 +79,4 @@ export function ListToolbar({ query, onChange }: ListToolbarProps) {
       </button>
     </div>
   );
-}
-
-function isTyping(target: EventTarget | null): boolean {
-  return target instanceof HTMLElement && (target.isContentEditable || target.closest('input, textarea, select') !== null);
 }
