@@ -5,8 +5,8 @@ import { nextProgram } from './build.mjs';
 import { rotate, sizeOf, tailOf } from './logs.mjs';
 import { root, shown } from './paths.mjs';
 import { ended, launch, signalGroup, stopChild } from './processes.mjs';
-import { Failure } from './say.mjs';
-import { stopLater } from './shutdown.mjs';
+import { Failure, say } from './say.mjs';
+import { isStopping, stopLater } from './shutdown.mjs';
 
 /** @typedef {import('./paths.mjs').Layout} Layout */
 
@@ -96,12 +96,17 @@ export async function startWeb({ mode, host, port, env, layout }) {
     kill: () => signalGroup(child.pid, 'SIGKILL'),
   };
   const forget = stopLater(server);
-  const trouble = await waitForHealth(`http://${reachableHost(host)}:${port}/api/health`, exited, 120_000);
+  const trouble = await waitForHealth(`http://${reachableHost(host)}:${port}/api/health`, exited, mode === 'dev' ? 30_000 : 120_000);
   forget();
   if (trouble === null) return server;
   const runs = child.exitCode === null && child.signalCode === null;
+  if (runs && mode === 'dev' && !isStopping()) {
+    // What is wrong is in the developer's own hands, and the server will see when it is mended.
+    say(`✗ The development server runs, but ${trouble}.`);
+    return server;
+  }
   await server.stop();
-  if (runs) throw new Failure(`The web server runs but is not well: ${trouble} (its log is ${shown(layout.webLog)}).`);
+  if (runs) throw new Failure(`The web server runs, but ${trouble} (its log is ${shown(layout.webLog)}).`);
   throw new Failure(endedSentence(tailOf(layout.webLog, logStart), port, shown(layout.webLog)));
 }
 
