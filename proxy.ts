@@ -14,7 +14,10 @@ export async function proxy(request: NextRequest): Promise<NextResponse> {
   const nonce = Buffer.from(crypto.getRandomValues(new Uint8Array(16))).toString('base64');
   const policy = contentSecurityPolicy(nonce);
 
-  const isPage = !OPEN.has(pathname) && !pathname.startsWith('/api/');
+  // A server action is a POST to its page's address, and says in words that the session is over; redirected, it would
+  // come back to the page as no answer at all.
+  const reads = request.method === 'GET' || request.method === 'HEAD';
+  const isPage = reads && !OPEN.has(pathname) && !pathname.startsWith('/api/');
   if (isPage && !(await getToken({ req: request }))) {
     const signIn = request.nextUrl.clone();
     signIn.pathname = '/sign-in';

@@ -39,6 +39,13 @@ describe('before every page', () => {
     },
   );
 
+  it('does not lead a server action away: it says itself that the session is over, and a redirect would say nothing', async () => {
+    const action = new NextRequest('http://localhost:3000/sheets/abc', { method: 'POST', headers: { 'next-action': 'x' } });
+    const response = await proxy(action);
+    expect(response.headers.get('x-middleware-next')).toBe('1');
+    expect(policyOf(response)).toContain("default-src 'self'");
+  });
+
   it('lets a session through, and not one that is forged', async () => {
     expect((await ask('/sheets', await session())).status).toBe(200);
     expect((await ask('/sheets', { cookie: `${sessionCookieName()}=a.b.c.d.e` })).status).toBe(307);

@@ -3,6 +3,7 @@
 import { useRouter } from 'next/navigation';
 import { startTransition } from 'react';
 import { LeftHere } from './_room/left-here';
+import { useRetryWhenHealthy } from './_room/use-retry-when-healthy';
 import { MessagePage } from '@/app/_frame/message-page';
 import { loadPage } from '@/app/_client/load-page';
 import { Button } from '@/components/button';
@@ -22,6 +23,9 @@ export default function SheetError({
       router.refresh();
       reset();
     });
+  // A digest means that the server failed; without one this page did, and would again.
+  const waits = error.digest !== undefined;
+  useRetryWhenHealthy(waits, again);
 
   return (
     <MessagePage
@@ -45,6 +49,7 @@ export default function SheetError({
     >
       Something went wrong that should not have: most often the server cannot reach its database for a moment. What you
       typed is kept on this machine, and is taken up when the sheet opens again.
+      {waits && ' It is tried again by itself as soon as the server answers.'}
     </MessagePage>
   );
 }

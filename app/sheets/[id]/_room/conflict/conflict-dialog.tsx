@@ -88,12 +88,13 @@ export function ConflictDialog({
       footer={
         <>
           {mayClone && (
-            <Button busy={busy} onClick={() => void keepBoth()}>
+            // The focus starts where nothing is lost.
+            <Button busy={busy} onClick={() => void keepBoth()} data-autofocus="">
               Keep both, mine as a clone
             </Button>
           )}
           <Button onClick={() => setDropping(true)}>Keep theirs</Button>
-          <Button variant="primary" onClick={onKeepMine} data-autofocus="">
+          <Button variant="primary" onClick={onKeepMine}>
             Keep mine
           </Button>
         </>

@@ -7,6 +7,8 @@ export type KeepingWords = { readonly state: KeepingState; readonly text: string
 export function keepingWords(keeping: Keeping, archived: boolean): KeepingWords {
   const revision = `revision ${keeping.revision}`;
   if (keeping.conflict !== null) return { state: 'conflict', text: 'Conflict', short: 'Conflict' };
+  // Until this machine's storage has been asked, nobody knows whether the server has everything.
+  if (keeping.hand === 'opening') return { state: 'saving', text: 'Opening…', short: 'Opening…' };
   if (keeping.hand === 'nobody' || keeping.hand === 'elsewhere') {
     return { state: 'saved', text: `${archived ? 'In the archive' : 'Read only'} · ${revision}`, short: 'Read only' };
   }

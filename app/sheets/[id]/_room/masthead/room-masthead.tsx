@@ -113,7 +113,8 @@ function State({
       </span>
     </>
   );
-  const frame = 'flex h-[30px] items-center rounded-md';
+  // As wide as its longest words, so that nothing beside it moves while the state changes.
+  const frame = 'flex h-[30px] w-[6.25rem] items-center rounded-md sm:w-[11.25rem]';
   if (onPress === undefined) {
     return (
       <span data-keeping={words.state} title={title} className={frame}>

@@ -1,5 +1,6 @@
-import { Archive, Camera, Copy, Download, FileStack, Keyboard, Printer } from 'lucide-react';
+import { Camera, Copy, Download, FileStack, Keyboard, LayoutList, Printer } from 'lucide-react';
 import type { SheetOrigin } from '@/app/_shared/wire';
+import { isMac, keyWords } from '@/canvas/react/help/key-words';
 import type { MenuEntry } from '@/components/menu-entry';
 import { applyTheme, parseTheme, THEME_LABELS, THEMES, type Theme } from '@/components/theme';
 import { originWords } from './room-masthead';
@@ -31,7 +32,7 @@ export function roomMenu({
 }: RoomMenuProps): readonly MenuEntry[] {
   const entries: MenuEntry[] = [];
   if (onSnapshot !== undefined) {
-    entries.push({ kind: 'item', label: 'Take a snapshot…', icon: <Camera {...icon} />, shortcut: 'Ctrl S', onSelect: onSnapshot });
+    entries.push({ kind: 'item', label: 'Take a snapshot…', icon: <Camera {...icon} />, shortcut: keyWords('mod+s', isMac()), onSelect: onSnapshot });
   }
   entries.push({ kind: 'item', label: 'Snapshots…', icon: <FileStack {...icon} />, onSelect: onSnapshots });
   if (onClone !== undefined) {
@@ -57,6 +58,6 @@ export function roomMenu({
   if (origin !== null) {
     entries.push({ kind: 'link', label: originWords(origin), icon: <Copy {...icon} />, href: `/sheets/${origin.sheetId}` });
   }
-  entries.push({ kind: 'link', label: 'All sheets', icon: <Archive {...icon} />, href: '/sheets' });
+  entries.push({ kind: 'link', label: 'All sheets', icon: <LayoutList {...icon} />, href: '/sheets' });
   return entries;
 }

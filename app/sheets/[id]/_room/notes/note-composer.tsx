@@ -28,8 +28,9 @@ export function NoteComposer({ where, keptAs, onSend, onClose }: NoteComposerPro
   const { box, busy, error, send } = useSending(text, setText, (ready) => onSend({ class: noteClass, text: ready }), onClose);
 
   useEffect(() => {
-    box.current?.scrollIntoView({ block: 'nearest' });
-    box.current?.focus();
+    box.current?.focus({ preventScroll: true });
+    // The whole form with its buttons, not the text alone.
+    box.current?.form?.scrollIntoView({ block: 'nearest' });
   }, [box]);
 
   const drop = () => {
