@@ -13,7 +13,9 @@ export type StoredDocument = {
 /** The one way in. The same document always comes to the same text, so equal ones have equal hashes. */
 export function toStored(document: SheetDocument): StoredDocument {
   const text = serializeSheetDocument(document);
-  return { document: text, documentHash: hashOf(text), purpose: document.purpose, partCount: document.parts.length };
+  // Reference marks, names and junctions are drawn like parts, but nobody would count them.
+  const partCount = document.parts.filter(({ designator }) => designator !== '').length;
+  return { document: text, documentHash: hashOf(text), purpose: document.purpose, partCount };
 }
 
 /**

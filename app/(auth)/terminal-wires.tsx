@@ -20,7 +20,7 @@ export function TerminalWires() {
           <path d="M342 40h212" />
           <path d="M440 40v74M424 114h32M424 124h32M440 124v96" />
           <path d="M0 220h554" />
-          <path d="M222 220v16M208 236h28M213 242h18M218 248h8" />
+          <path d="M222 220v16M208 236h28" />
         </g>
         <g fill="var(--ink)">
           <circle cx="440" cy="40" r="4" />

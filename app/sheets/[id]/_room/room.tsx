@@ -69,6 +69,12 @@ function OpenRoom({ sheet, person, rights, theme, document }: RoomProps & { read
     rememberRoom({ userId: person.userId, sheetId: sheet.id, sheetName: sheet.name }, () => keeper.text());
   }, [keeper, person.userId, sheet.id, sheet.name]);
 
+  useEffect(() => {
+    // The drawing is what one comes for: its keys work as soon as a hand may meet it.
+    if (opening || window.document.activeElement !== window.document.body) return;
+    window.document.querySelector<HTMLElement>('[data-drawing]')?.focus({ preventScroll: true });
+  }, [opening]);
+
   const unarchive = async () => {
     const result = await attempt(() => restoreSheet({ id: sheet.id }));
     if (result.ok) router.refresh();
