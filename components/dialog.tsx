@@ -41,6 +41,7 @@ function OpenDialog({
 }: Omit<DialogProps, 'open'>) {
   const id = useId();
   const frame = useRef<HTMLDialogElement>(null);
+  const body = useRef<HTMLDivElement>(null);
   const close = useRef(onClose);
   useEffect(() => {
     close.current = onClose;
@@ -50,6 +51,9 @@ function OpenDialog({
     const node = frame.current;
     if (node === null) return;
     node.showModal();
+    const text = body.current;
+    // Something long to read with nothing to press in it must still be scrolled by whoever has only keys.
+    if (text !== null && text.scrollHeight > text.clientHeight && text.querySelector(STOPS) === null) text.tabIndex = 0;
     firstStop(node)?.focus();
     return () => node.close();
   }, []);
@@ -91,7 +95,7 @@ function OpenDialog({
           <X size={18} strokeWidth={1.75} aria-hidden="true" />
         </button>
       </header>
-      <div className="min-h-0 overflow-y-auto px-5 pt-1 pb-5">
+      <div ref={body} className="min-h-0 overflow-y-auto px-5 pt-1 pb-5">
         {description !== undefined && (
           <p id={`${id}-description`} className="text-sm leading-normal text-pretty text-muted">
             {description}
@@ -105,6 +109,8 @@ function OpenDialog({
     </dialog>
   );
 }
+
+const STOPS = 'a[href], button, input, select, textarea, [tabindex]';
 
 function firstStop(node: HTMLElement): HTMLElement | null {
   return (
