@@ -1,22 +1,13 @@
 import type { Metadata } from 'next';
 import { cookies } from 'next/headers';
 import { notFound } from 'next/navigation';
-import { cache } from 'react';
-import { Room } from './_room/room';
-import type { RoomRights } from './_room/rights';
+import { openSheet } from '../_room/open-sheet';
+import { Room } from '../_room/room';
+import type { RoomRights } from '../_room/rights';
 import { allowed } from '@/app/_server/permissions';
-import { requireViewer } from '@/app/_server/viewer';
-import { idSchema, type SheetRecord, type Viewer } from '@/app/_shared/wire';
 import { parseTheme, THEME_COOKIE } from '@/components/theme';
-import { findSheet } from '@/db/queries/sheets';
 
 type Props = { readonly params: Promise<{ readonly id: string }> };
-
-/** Asked once a request, by the title and by the page. */
-const openSheet = cache(async (id: string): Promise<{ readonly viewer: Viewer; readonly sheet: SheetRecord | null }> => {
-  const viewer = await requireViewer();
-  return { viewer, sheet: idSchema.safeParse(id).success ? await findSheet(viewer, id) : null };
-});
 
 export async function generateMetadata({ params }: Props): Promise<Metadata> {
   const { sheet } = await openSheet((await params).id);
