@@ -2,6 +2,7 @@ import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { Edit, Panel, Showing, Tool } from '../commands/command';
 import { NOTHING_SELECTED, stillThere, type Selection } from '../document/selection';
 import type { PartId, SheetDocument } from '../document/types';
+import { limitPassed } from '../document/within-limits';
 import type { Point } from '../geometry/point';
 import { readNetwork, type Readings } from '../network/readings';
 import { closeGesture, NO_HISTORY, redo, remember, undo, type History, type Moved } from './history';
@@ -79,6 +80,11 @@ export function createSheetStore(document: SheetDocument, mayEdit: boolean): She
       apply(edit) {
         const state = get();
         if (!state.mayEdit && !onlyLooks(state.document, edit.document)) return;
+        const passed = limitPassed(edit.document);
+        if (passed !== null) {
+          state.say(passed);
+          return;
+        }
         const changed = edit.document !== state.document;
         const selection = stillThere(edit.selection ?? state.selection, edit.document);
         set({

@@ -18,6 +18,25 @@ function valued(document: SheetDocument, id: string, values: Record<string, stri
 
 const nudged = (document: SheetDocument) => moveParts(document, new Set(['resistor-1']), { x: 10, y: 0 });
 
+describe('the bounds of a sheet', () => {
+  it('are kept to: an edit that could not be saved is refused in words and changes nothing', () => {
+    const sheet = dividerSheet();
+    const store = createSheetStore(sheet, true);
+    const everything = new Set(sheet.parts.map(({ id }) => id));
+    store.getState().apply({ label: 'Move', document: moveParts(sheet, everything, { x: 200_000, y: 0 }) });
+    expect(store.getState().document).toBe(sheet);
+    expect(store.getState().history.past).toHaveLength(0);
+    expect(store.getState().spoken.text).toMatch(/beyond the edge of the sheet/);
+
+    const [part] = sheet.parts;
+    if (!part) throw new Error('the divider has parts');
+    const many = Array.from({ length: 5001 }, (_, index) => ({ ...part, id: `p${index}` }));
+    store.getState().apply({ label: 'Paste', document: { ...sheet, parts: many } });
+    expect(store.getState().document).toBe(sheet);
+    expect(store.getState().spoken.text).toMatch(/at most 5000 parts/);
+  });
+});
+
 describe('the store of an open sheet', () => {
   it('has the readings of its document in the same step as the document', () => {
     const store = createSheetStore(dividerSheet(), true);
