@@ -2,12 +2,11 @@
 
 import { useEffect, useRef, useState } from 'react';
 import { checkField, setValues } from '../../commands/edits/values';
-import { partsById } from '../../document/lookup';
+import { bodyOf, partsById } from '../../document/lookup';
 import type { Part } from '../../document/types';
-import { bodyOf } from '../../document/lookup';
 import { definitionOf } from '../../parts/registry';
+import { echoField } from '../figures/echo';
 import { useSheet, useSheetStore } from '../sheet-context';
-import { echoOf } from './echo-of';
 
 /** The field that opens on the drawing, beside the part, on a double press or Enter. */
 export function ValueEditor() {
@@ -39,7 +38,7 @@ function Editor({ part }: { part: Part }) {
     }
     const result = setValues(state.document, part.id, { [field.key]: text });
     if (!result.ok) state.say(`${name} keeps ${before}. ${result.message}`);
-    else state.apply({ label: `Set ${name} to ${text.trim()}`, document: result.document, say: `${name} is ${echoOf(field, text)}.` });
+    else state.apply({ label: `Set ${name} to ${text.trim()}`, document: result.document, say: `${name} is ${echoField(field, text) || text.trim()}.` });
   };
 
   return (
@@ -73,7 +72,7 @@ function Editor({ part }: { part: Part }) {
         />
       </label>
       <p id="value-editor-echo" role="status" className={`mt-1 text-[12px] ${fault === null ? 'font-mono text-muted' : 'text-falls'}`}>
-        {fault ?? echoOf(field, text)}
+        {fault ?? echoField(field, text)}
       </p>
     </div>
   );
