@@ -326,8 +326,11 @@ function focusPart(target: EventTarget, store: ReturnType<typeof useSheetStore>)
   if (id !== undefined && store.getState().tool.kind === 'select') store.getState().select(selectParts([id]));
 }
 
+/** A choice or a tick has no text of its own to undo or to copy: there the keys are the drawing's. */
+const TEXT_FIELDS = 'input:not([type="radio"], [type="checkbox"]), textarea, select';
+
 function typesText(target: EventTarget | null): boolean {
-  return target instanceof HTMLElement && (target.isContentEditable || target.matches('input, textarea, select'));
+  return target instanceof HTMLElement && (target.isContentEditable || target.matches(TEXT_FIELDS));
 }
 
 function isPartKind(text: string): text is PartKind {
