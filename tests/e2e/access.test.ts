@@ -17,7 +17,7 @@ test('the address of another team’s sheet leads nowhere, as one that never was
   for (const address of [id, 'AAAAAAAAAAAAAAAAAAAA']) {
     const response = await stranger.goto(`/sheets/${address}`);
     expect(response?.status()).toBe(404);
-    await expect(stranger.getByRole('heading', { name: 'There is nothing at this address' })).toBeVisible();
+    await expect(stranger.getByRole('heading', { name: 'There is no such sheet' })).toBeVisible();
     answers.set(address, await stranger.locator('main').innerText());
     for (const path of [`/api/sheets/${address}`, `/api/sheets/${address}/export`, `/api/sheets/${address}/notes`]) {
       expect((await stranger.request.get(path)).status(), path).toBe(404);

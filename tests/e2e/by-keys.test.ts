@@ -19,6 +19,8 @@ test('a low-pass is drawn, valued, tuned and undone with keys alone', async ({ m
     }
   });
 
+  // Nothing has to be looked for first: the keys work from the start.
+  await expect(drawing.surface).toBeFocused();
   // Each part is placed from where the one before was left.
   await drawing.keys('v', ...far('ArrowLeft', 3), 'Enter');
   await expect(drawing.spoken).toContainText('Placed voltage source VS1.');

@@ -119,7 +119,7 @@ test('a source is typed in full, and one of another frequency is dead and says s
   await ledger.region.getByRole('radio', { name: 'its own' }).check();
   await ledger.field('In Hz or rad/s').fill('50 Hz');
   await ledger.field('In Hz or rad/s').press('Enter');
-  await expect(page.getByRole('list', { name: 'How to read the figures' })).toContainText(/VS1 \(50\.0\sHz\) is dead at 1\.00\skHz/);
+  await expect(page.getByRole('list', { name: 'How to read the figures' })).toContainText(/VS1 \(50\.00\sHz\) is dead at 1\.000\skHz/);
   await expect.poll(() => room.drawing.words('VS1')).toContain('dead at this frequency');
   await room.band.type('50');
   await ledger.expectReading('node', 'out', { size: 10 / (2 * Math.SQRT2) / 2, degrees: -60 });
