@@ -92,6 +92,17 @@ describe('what is typed', () => {
   });
 });
 
+describe('a key that comes before the sheet is open', () => {
+  it('counts as typed', async () => {
+    const server = new FakeServer(withPurpose('as opened'));
+    const tab = new FakeTab(server, new FakeMachine(), freshSheetId());
+    tab.keeper.start();
+    tab.type('early');
+    await pass(700);
+    expect(purposeOf(server.document)).toBe('early');
+  });
+});
+
 describe('a server that does not answer', () => {
   it.each(['lostOnTheWay', 'noDatabase'] as const)('%s: keeps it here, tries at 1, 2, 4 … 30 s, and saves when it answers', async (fate) => {
     const { server, tab, draft } = await opened();

@@ -175,8 +175,8 @@ function DifferenceTable({
               <th scope="row" className="py-1 pr-2 font-medium">
                 {row.what}
               </th>
-              <td className="py-1 pr-2 font-mono tabular-nums wrap-anywhere">{row.mine}</td>
-              <td className="py-1 font-mono tabular-nums wrap-anywhere">{row.theirs}</td>
+              <td className="py-1 pr-2 tabular-nums wrap-anywhere">{row.mine}</td>
+              <td className="py-1 tabular-nums wrap-anywhere">{row.theirs}</td>
             </tr>
           ))}
         </tbody>

@@ -56,9 +56,16 @@ export function differences(mine: SheetDocument, theirs: SheetDocument): readonl
     found.push({ what: 'Convention', mine: conventionOf(mine), theirs: conventionOf(theirs) });
   }
   if (mine.purpose !== theirs.purpose) {
-    found.push({ what: 'Purpose', mine: mine.purpose || NOTHING, theirs: theirs.purpose || NOTHING });
+    found.push({ what: 'Purpose', mine: opening(mine.purpose), theirs: opening(theirs.purpose) });
   }
   return found;
+}
+
+/** A paragraph by its first words. */
+function opening(text: string): string {
+  const characters = Array.from(text);
+  if (characters.length === 0) return NOTHING;
+  return characters.length <= 140 ? text : `${characters.slice(0, 140).join('')}…`;
 }
 
 function nameOf(part: Part): string {

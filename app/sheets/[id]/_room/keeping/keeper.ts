@@ -75,6 +75,8 @@ export class Keeper {
   private attempt = 0;
   private unanswered: readonly { readonly mark: string; readonly change: number }[] = [];
   private shown: SheetDocument;
+  /** A key reached the sheet before it was known who writes. */
+  private touched = false;
   private lastText: { readonly document: SheetDocument; readonly text: string } | null = null;
   private keepBeganMs = -Infinity;
   private sendTimer: ReturnType<typeof setTimeout> | undefined;
@@ -135,6 +137,7 @@ export class Keeper {
   changed(document: SheetDocument): void {
     if (document === this.shown) return;
     this.shown = document;
+    if (this.keeping.hand === 'opening') this.touched = true;
     if (this.keeping.hand !== 'here') return;
     this.step({ type: 'typed', atMs: this.ports.now() });
     this.keepSoon();
@@ -329,6 +332,11 @@ export class Keeper {
     }
     this.remember(this.standing.revision);
     this.step({ type: 'hand', hand: 'here', atMs });
+    if (this.touched) {
+      this.touched = false;
+      this.step({ type: 'typed', atMs });
+      this.keepSoon();
+    }
   }
 
   private yield(): void {
@@ -341,6 +349,7 @@ export class Keeper {
 
   private display(document: SheetDocument): void {
     this.shown = document;
+    this.touched = false;
     this.ports.show(document);
   }
 

@@ -16,7 +16,7 @@ export function keepingWords(keeping: Keeping, archived: boolean): KeepingWords 
   if (keeping.trouble !== null || keeping.slow) {
     return keeping.storage === 'fails'
       ? { state: 'unavailable', text: 'Not kept anywhere yet', short: 'Not kept' }
-      : { state: 'local', text: 'Kept on this machine only', short: 'Kept here only' };
+      : { state: 'local', text: 'Kept on this machine only', short: 'Kept here' };
   }
   return { state: 'saving', text: 'Saving…', short: 'Saving…' };
 }
