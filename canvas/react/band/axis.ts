@@ -6,6 +6,11 @@ export function shareOf(band: BandRange, hz: number): number {
   return Math.log(hz / band.fromHz) / Math.log(band.toHz / band.fromHz);
 }
 
+/** A share as a length for a style. Rounded, since the server's logarithms and the browser's differ in the last digit. */
+export function percentOf(share: number): string {
+  return `${(share * 100).toFixed(3)}%`;
+}
+
 export function hertzAt(band: BandRange, share: number): number {
   return band.fromHz * (band.toHz / band.fromHz) ** share;
 }

@@ -1,6 +1,6 @@
 import { memo, useMemo } from 'react';
 import type { BandRange } from '../../document/types';
-import { axisTicks, type Tick } from './axis';
+import { axisTicks, percentOf, type Tick } from './axis';
 
 export type FrequencyAxisProps = {
   readonly band: BandRange;
@@ -22,7 +22,7 @@ export const FrequencyAxis = memo(function FrequencyAxis({ band, lengthPx }: Fre
         <span
           key={tick.hz}
           className={tick.weight === 'minor' ? 'absolute w-px bg-rule' : 'absolute w-px bg-edge'}
-          style={{ left: `${tick.share * 100}%`, bottom: RULE_AT, height: HEIGHTS[tick.weight] }}
+          style={{ left: percentOf(tick.share), bottom: RULE_AT, height: HEIGHTS[tick.weight] }}
         />
       ))}
       {ticks.map(
@@ -31,7 +31,7 @@ export const FrequencyAxis = memo(function FrequencyAxis({ band, lengthPx }: Fre
             <span
               key={tick.hz}
               className="absolute bottom-0.5 -translate-x-1/2 font-mono text-[11.5px] leading-4 whitespace-nowrap text-muted tabular-nums"
-              style={{ left: `${tick.share * 100}%` }}
+              style={{ left: percentOf(tick.share) }}
             >
               {tick.label}
             </span>

@@ -7,7 +7,7 @@ import { frequencyText, setOperatingFrequency } from '../../commands/looking-com
 import { formatAngular, formatHertz } from '../figures/echo';
 import { useCommands } from '../screen-context';
 import { useSheet, useSheetStore } from '../sheet-context';
-import { handlePlace } from './axis';
+import { handlePlace, percentOf } from './axis';
 import { FrequencyEntry } from './frequency-entry';
 import { frequencyAfterKey } from './step-frequency';
 
@@ -60,7 +60,7 @@ export function FrequencyHandle({ onCancel, ref }: FrequencyHandleProps) {
   const direct = hz === 0;
   return (
     <Popover.Root open={typing} onOpenChange={setTyping}>
-      <div className="pointer-events-none absolute inset-y-0 z-10 w-0" style={{ left: `${share * 100}%` }}>
+      <div className="pointer-events-none absolute inset-y-0 z-10 w-0" style={{ left: percentOf(share) }}>
         <div
           aria-hidden="true"
           className={classNames('absolute top-[26px] bottom-[22px] -left-px w-0.5 bg-ink', parked !== null && 'opacity-35')}

@@ -28,6 +28,8 @@ function nodeOf(part: Part, label: TextBlock | null): PartNode {
   const node: PartNode = {
     id: part.id,
     type: 'part',
+    // A junction is a point of a wire, and says nothing by itself: going from part to part passes it by.
+    focusable: part.kind !== 'junction',
     position: { x: box.left, y: box.top },
     width: box.right - box.left,
     height: box.bottom - box.top,
