@@ -79,7 +79,7 @@ test('a broken, foreign, hostile or too large file is refused in a sentence, and
     await test.step(what, async () => {
       const list = await SheetList.open(page);
       await list.choose('given.json', typeof text === 'string' ? text : text());
-      await expect(list.said).toContainText('“given.json” was not imported: ');
+      await expect(list.said).toContainText('“given.json” was not imported. ');
       await expect(list.said).toContainText(says);
       await expect(list.sheets).toHaveText(['The only sheet']);
     });
