@@ -20,7 +20,7 @@ test('in the frame after an edit, the handle, the status line and every reading 
     });
     const seen = [look()];
     for (let edits = 0; edits < 12; edits += 1) {
-      window.dispatchEvent(new KeyboardEvent('keydown', { key: '}', bubbles: true, cancelable: true }));
+      document.querySelector('[data-drawing]')?.dispatchEvent(new KeyboardEvent('keydown', { key: '}', bubbles: true, cancelable: true }));
       // Before the frame that the browser would paint next.
       await new Promise<void>((resolve) => requestAnimationFrame(() => resolve()));
       seen.push(look());
