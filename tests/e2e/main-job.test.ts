@@ -72,6 +72,10 @@ test('a new user draws a low-pass with the pointer, reads it, errs, undoes, keep
     for (let steps = 0; steps < 40; steps += 1) await room.drawing.keys('Control+z');
     await expect(room.drawing.parts).toHaveCount(0);
     for (let steps = 0; steps < 40; steps += 1) await room.drawing.keys('Control+Shift+z');
+    // The last of all was taking the reference away, which had been undone: redone too, it goes again, and the junction
+    // that its wire made with it.
+    await expect(room.drawing.parts).toHaveCount(parts - 2);
+    await room.drawing.keys('Control+z');
     await expect(room.drawing.parts).toHaveCount(parts);
     await expectReadings(room, filter, hertz);
   });
