@@ -8,7 +8,7 @@ import { NOTHING_SELECTED, selectParts, selectWires, type Selection } from '../.
 import type { Part, PartId, SheetDocument, Wire } from '../../document/types';
 import { boxOfPoints, contains, grow, overlap, type Box } from '../../geometry/box';
 import { nearestOnCourse } from '../../geometry/hit';
-import { distance, snap, subtract, type Point } from '../../geometry/point';
+import { distance, GRID, snap, subtract, type Point } from '../../geometry/point';
 import { pathOf } from '../../geometry/route';
 import { definitionOf } from '../../parts/registry';
 import { MOVING_WIRES, RESTING_WIRES } from './wire-layer';
@@ -71,7 +71,9 @@ export function createGestures(context: () => CommandContext) {
     const part = partAt(document, at, pointer === 'coarse' ? 8 / zoom : 2);
     // A junction is little more than its pin: its rim drags it, its middle starts a wire.
     const middle = part?.kind === 'junction' && pin ? distance(part.at, at) <= 4 : true;
-    if (pin && middle && !(part && part.kind !== 'junction' && distance(pin.at, at) > reach * 0.7)) {
+    // Over a body a pin counts only close by: on a drawing zoomed far out its reach would cover all of the part.
+    const overBody = part !== null && part.kind !== 'junction';
+    if (pin && middle && !(overBody && distance(pin.at, at) > Math.min(reach * 0.7, GRID * 0.8))) {
       return { kind: 'pin', target: pin };
     }
     if (part) return { kind: 'part', part };
