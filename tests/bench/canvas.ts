@@ -37,7 +37,7 @@ async function measureEdits(page: Page, room: Room): Promise<void> {
   await room.drawing.select('R2');
   const field = room.ledger.field('Resistance');
   for (let edit = 0; edit < (WARM_UP + EDITS) / 2; edit += 1) {
-    await field.fill(edit % 2 === 0 ? `${3 + edit / 100}` : '3.3');
+    await field.fill(edit % 2 === 0 ? `${30 + edit}` : '3.3');
     await timed(page, () => field.press('Enter'));
     await room.drawing.surface.focus();
     await timed(page, () => page.keyboard.press(edit % 2 === 0 ? '}' : '{'));
