@@ -34,7 +34,8 @@ await inBrowser(async (browser) => {
 async function measureEdits(page: Page, room: Room): Promise<void> {
   await room.ledger.show('current');
   await startEditClock(page);
-  await room.drawing.select('R2');
+  // The source's own resistance: whatever it becomes, every current and voltage of the ladder becomes another.
+  await room.drawing.select('R1');
   const field = room.ledger.field('Resistance');
   for (let edit = 0; edit < (WARM_UP + EDITS) / 2; edit += 1) {
     await field.fill(edit % 2 === 0 ? `${30 + edit}` : '3.3');

@@ -28,11 +28,9 @@ export async function watchFrames(page: Page, move: (phase: number) => Promise<v
   const scriptBefore = await scriptSeconds(session);
   await page.evaluate(() => {
     const frames = (window.benchFrames = { stamps: [] as number[], running: true });
-    const next = (stamp: number) => {
-      frames.stamps.push(stamp);
-      if (frames.running) requestAnimationFrame(next);
-    };
-    requestAnimationFrame(next);
+    void (async () => {
+      while (frames.running) frames.stamps.push(await new Promise<number>((resolve) => requestAnimationFrame(resolve)));
+    })();
   });
   await keepMoving(move, GESTURE_MS);
   const stamps = await page.evaluate(() => {
