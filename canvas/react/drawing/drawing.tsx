@@ -187,6 +187,8 @@ function PartNames({ parts, readings }: { parts: readonly { readonly id: string 
         if (!part) continue;
         const name = describePart(part, state);
         if (element.getAttribute('aria-label') !== name) element.setAttribute('aria-label', name);
+        // React Flow gives no role to what Tab passes by (a junction), and a name needs one to stand on.
+        if (!element.hasAttribute('role')) element.setAttribute('role', 'img');
         element.dataset['part'] = part.designator || part.kind;
       }
     }, 120);

@@ -379,8 +379,8 @@ export class Keeper {
   private keepSoon(): void {
     clearTimeout(this.keepTimer);
     const wait = this.keepBeganMs + KEEP_EVERY_MS - this.ports.now();
-    if (wait <= 0) void this.keep();
-    else this.keepTimer = setTimeout(() => void this.keep(), wait);
+    // Never within the edit itself: setting the sheet as text would hold up the readings. A page that ends flushes.
+    this.keepTimer = setTimeout(() => void this.keep(), Math.max(0, wait));
   }
 
   private async keep(): Promise<void> {
