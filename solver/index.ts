@@ -5,14 +5,28 @@
  */
 export type {
   Capacitor,
+  ComplexPair,
+  CoupledInductors,
+  CurrentControlledCurrentSource,
+  CurrentControlledVoltageSource,
   CurrentSource,
   Element,
   ElementKind,
   ElementList,
+  IdealTransformer,
+  Impedance,
+  ImpedancePoint,
   Inductor,
+  Line,
   NodePair,
+  NodeQuad,
+  OperationalAmplifier,
   Resistor,
+  ScatteringPoint,
   SourceValue,
+  TwoPort,
+  VoltageControlledCurrentSource,
+  VoltageControlledVoltageSource,
   VoltageSource,
 } from './elements/element-list';
 export { REFERENCE_NODE } from './elements/element-list';

@@ -74,9 +74,7 @@ function fixedFrequencies(list: ElementList, frequencyHz: number): ElementList {
       case 'voltageSource':
       case 'currentSource':
         return { ...element, value: { ...element.value, frequency: element.value.frequency ?? frequencyHz } };
-      case 'resistor':
-      case 'capacitor':
-      case 'inductor':
+      default:
         return element;
     }
   });

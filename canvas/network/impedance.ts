@@ -12,7 +12,7 @@ export type ElementImpedance =
 
 /**
  * The impedance of a passive element from its own value: R, jωL, 1/(jωC). Not from its readings, which may both be
- * zero. `null` for a source, whose voltage and current have no ratio of their own.
+ * zero. `null` for what has none of its own: a source, and an element with further pins.
  */
 export function impedanceOf(element: Element, frequencyHz: number): ElementImpedance | null {
   const omega = TWO_PI * frequencyHz;
@@ -27,8 +27,7 @@ export function impedanceOf(element: Element, frequencyHz: number): ElementImped
       const susceptance = omega * element.capacitance;
       return susceptance === 0 ? { kind: 'open' } : ohms(0, -1 / susceptance);
     }
-    case 'voltageSource':
-    case 'currentSource':
+    default:
       return null;
   }
 }

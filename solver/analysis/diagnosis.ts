@@ -4,6 +4,7 @@ import type { Element } from '../elements/element-list';
 import { kindName } from '../elements/registry';
 import type { Freedom } from './branch-form';
 import type { Network } from './network';
+import { elementAt } from './network';
 import type { Problem } from './problem';
 import { listNames, nodeWords, problem } from './problem';
 import type { Component, VoltageLoop } from './structure';
@@ -14,8 +15,9 @@ function names(network: Network, nodes: Iterable<number>): string[] {
   return Array.from(nodes, (node) => network.nodeNames[node] ?? '');
 }
 
+/** The elements of rows by their ids, each once. */
 function ids(network: Network, rows: Iterable<number>): string[] {
-  return Array.from(rows, (row) => network.elements[row]?.id ?? '');
+  return [...new Set(Array.from(rows, (row) => elementAt(network, row)?.id ?? ''))];
 }
 
 function nodesOf({ first, second }: Network, rows: Iterable<number>): Set<number> {
@@ -36,8 +38,7 @@ function asConnection(element: Element): string {
       return element.inductance === 0 ? `${element.id} (0 H)` : `${element.id} (an ideal connection at 0 Hz)`;
     case 'resistor':
       return `${element.id} (0 Ω)`;
-    case 'capacitor':
-    case 'currentSource':
+    default:
       return element.id;
   }
 }
@@ -45,7 +46,7 @@ function asConnection(element: Element): string {
 /** A loop of given voltages: whether they add up to zero decides if a solution exists at all. */
 export function voltageLoopProblem(network: Network, loop: VoltageLoop, agrees: boolean): Problem {
   const rows = [loop.closing, ...loop.path].sort((a, b) => a - b);
-  const elements = rows.flatMap((row) => network.elements[row] ?? []);
+  const elements = rows.flatMap((row) => elementAt(network, row) ?? []);
   const words = listNames(elements.map(asConnection));
   const sources = elements.filter((element) => element.kind === 'voltageSource');
   const nodes = names(network, nodesOf(network, rows));
@@ -133,10 +134,12 @@ function openWords(network: Network): (id: string) => string {
         return element.capacitance === 0 ? `${id} (0 F)` : `${id} (open at 0 Hz)`;
       case 'currentSource':
         return `${id} (no current at this frequency)`;
-      case 'resistor':
-      case 'inductor':
-      case 'voltageSource':
-      case undefined:
+      case 'operationalAmplifier':
+        return `${id} (no current enters its inputs)`;
+      case 'voltageControlledVoltageSource':
+      case 'voltageControlledCurrentSource':
+        return `${id} (no current enters where it senses)`;
+      default:
         return id;
     }
   };
@@ -146,14 +149,14 @@ function openWords(network: Network): (id: string) => string {
 export function singularProblem(
   network: Network,
   branches: BranchTable,
-  component: Component,
+  components: readonly Component[],
   freedom: Freedom,
   frequency: number,
 ): Problem {
   const carrying = freedom.currents.filter((row) => branches.form[row] === ADMITTANCE);
   const lossless = carrying.length > 0 && carrying.every((row) => branches.zRe[row] === 0);
   const nodes = names(network, freedom.nodes.length > 0 ? freedom.nodes : nodesOf(network, freedom.currents));
-  const elements = ids(network, freedom.currents.length > 0 ? freedom.currents : component.admittances);
+  const elements = ids(network, freedom.currents.length > 0 ? freedom.currents : rowsOf(components));
   const where = `${listNames(elements)}${nodes.length === 0 ? '' : ` (${nodeWords(nodes)})`}`;
   if (lossless) {
     const what = `${listNames(ids(network, carrying))} resonate without loss at exactly ${frequency} Hz`;
@@ -177,27 +180,76 @@ export function singularProblem(
 }
 
 /** The network is beyond what can be solved with care at a frequency where care is needed. */
-export function tooLargeProblem(network: Network, component: Component, frequency: number): Problem {
-  const rows = component.admittances;
+export function tooLargeProblem(network: Network, components: readonly Component[], frequency: number): Problem {
+  const rows = rowsOf(components);
   return problem(
     'singular',
     ids(network, rows),
-    names(network, component.nodes),
+    names(
+      network,
+      components.flatMap(({ nodes }) => nodes),
+    ),
     `The equations of ${listNames(ids(network, rows))} are too near to having no solution at ${frequency} Hz, and too many ` +
       'to be solved with more care. Move the frequency, or add losses.',
   );
 }
 
 /** Values that leave the range in which the arithmetic can be trusted. */
-export function rangeProblem(network: Network, component: Component, rows: readonly number[]): Problem {
-  const at = rows.length > 0 ? rows : component.admittances;
+export function rangeProblem(network: Network, components: readonly Component[], rows: readonly number[]): Problem {
+  const at = rows.length > 0 ? rows : rowsOf(components);
   return problem(
     'notFinite',
     ids(network, at),
-    names(network, rows.length > 0 ? nodesOf(network, rows) : component.nodes),
+    names(network, rows.length > 0 ? nodesOf(network, rows) : components.flatMap(({ nodes }) => nodes)),
     `The value of ${listNames(ids(network, at))} is so large or so small at this frequency that it cannot be computed with. ` +
       'Check its power of ten.',
   );
+}
+
+/** The frequency lies outside what is known of an element. */
+export function noDataProblem(network: Network, rows: readonly number[], frequency: number): Problem {
+  const elements = ids(network, rows);
+  const what = elements.length === 1 ? 'its points do' : 'their points do';
+  return problem(
+    'noData',
+    elements,
+    names(network, nodesOf(network, rows)),
+    `${listNames(elements)} ${elements.length === 1 ? 'is' : 'are'} not known at ${frequency} Hz, where ${what} not reach. ` +
+      'Move the frequency, or give points that reach so far.',
+  );
+}
+
+/** Nothing leads from the output of an ideal amplifier back to its inputs. */
+export function noFeedbackProblem(network: Network, row: number, inputs: number): Problem {
+  const [id = ''] = ids(network, [row]);
+  return problem(
+    'noFeedback',
+    [id],
+    names(network, nodesOf(network, [row, inputs])),
+    `At this frequency nothing leads from the output of ${id} back to its inputs, so nothing sets the voltage there. ` +
+      'Connect the output to its inverting input through an element that conducts.',
+  );
+}
+
+/** Readings of which rounding may have taken too many digits. */
+export function notReliableProblem(network: Network, nodes: readonly number[], rows: readonly number[]): Problem {
+  const elements = ids(network, rows);
+  const at = names(network, nodes);
+  const what = [
+    ...(elements.length > 0 ? [`the readings of ${listNames(elements)}`] : []),
+    ...(at.length > 0 ? [`the voltage of ${nodeWords(at)}`] : []),
+  ].join(' and ');
+  return problem(
+    'notReliable',
+    elements,
+    at,
+    `${capital(what)} may be off by more than a millionth, because the equations are nearly singular at this frequency. ` +
+      'Move the frequency, or put in the losses that real parts have.',
+  );
+}
+
+function rowsOf(components: readonly Component[]): number[] {
+  return components.flatMap(({ admittances, equations }) => [...admittances, ...equations]);
 }
 
 function capital(text: string): string {

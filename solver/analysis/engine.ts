@@ -1,9 +1,10 @@
 import { BranchTable } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
-import { stampAll } from '../elements/registry';
-import { noReferenceProblem } from './diagnosis';
+import { noReferenceProblem, notReliableProblem } from './diagnosis';
+import type { LinkedForm } from './linked-system';
+import { prepareLinkedSystem, solveLinkedSystem } from './linked-system';
 import type { Network } from './network';
-import { REFERENCE, toNetwork } from './network';
+import { REFERENCE, rowOf, toNetwork } from './network';
 import { NodalForm } from './nodal-form';
 import type { Problem } from './problem';
 import { silenceQuietBlocks } from './quiet-blocks';
@@ -14,7 +15,9 @@ import { analyseStructure, patternOf } from './structure';
 
 interface Prepared {
   readonly structure: Structure;
-  readonly nodal: readonly NodalForm[];
+  /** None for a component that equations link to others. */
+  readonly nodal: readonly (NodalForm | undefined)[];
+  readonly linked: readonly LinkedForm[];
 }
 
 /**
@@ -33,40 +36,58 @@ export class Engine {
 
   constructor(list: ElementList) {
     this.network = toNetwork(list);
-    this.branches = new BranchTable(list.elements.length);
-    this.readings = new Readings(this.network.nodeNames.length, list.elements.length);
+    const { network } = this;
+    this.branches = new BranchTable(network.laws, (row, port) =>
+      typeof port === 'number'
+        ? (network.rowStart[network.elementOf[row] ?? 0] ?? 0) + port
+        : Math.max(0, rowOf(network, port.element)),
+    );
+    this.readings = new Readings(network.nodeNames.length, network.rowCount);
   }
 
   /** Fills `branches` and `readings` for a frequency (hertz, finite, not negative), and answers what stood in the way. */
   solveAt(frequency: number): readonly Problem[] {
     const { network, branches, readings } = this;
-    stampAll(network.elements, { frequency, omega: 2 * Math.PI * frequency }, branches);
-    const { structure, nodal } = this.prepare();
+    branches.evaluate({ frequency, omega: 2 * Math.PI * frequency });
+    const { structure, nodal, linked } = this.prepare();
     readings.clear();
     const problems: Problem[] = [...noReference(network, structure)];
-    const { components } = structure;
-    const checks = components.map((component) => checkComponent(network, structure, component, branches));
+    const { components, systemOf } = structure;
+    const checks = components.map((component) => checkComponent(network, structure, component, branches, frequency));
+    for (const check of checks) problems.push(...check.problems);
     this.condition = 1;
     const hasNoWayOn = checks.map(({ verdict }) => verdict === 'noWayOn');
-    this.solved = components.map((component) => {
-      const check = checks[component.index];
+    const isReady = (component: Component): boolean =>
+      checks[component.index]?.verdict === 'sound' && !this.isEnteredBy(component, structure, hasNoWayOn);
+    const solved = components.map((component) => {
       const form = nodal[component.index];
-      if (check === undefined || form === undefined) return false;
-      problems.push(...check.problems);
-      if (check.verdict !== 'sound' || this.isEnteredBy(component, structure, hasNoWayOn)) return false;
+      if (systemOf[component.index] !== -1 || form === undefined || !isReady(component)) return false;
       const outcome = solveComponent(network, structure, component, form, branches, frequency, readings);
       problems.push(...outcome.problems);
-      if (form.condition === undefined || this.condition === undefined) this.condition = undefined;
-      else this.condition = Math.max(this.condition, form.condition);
+      this.noteCondition(form.condition);
       return outcome.solved;
     });
+    for (const form of linked) {
+      if (!form.components.every(isReady)) continue;
+      const outcome = solveLinkedSystem(network, structure, form, branches, frequency, readings);
+      problems.push(...outcome.problems);
+      this.noteCondition(outcome.condition);
+      for (const { index } of form.components) solved[index] = outcome.solved;
+    }
+    this.solved = solved;
     this.setGivenCurrents(structure, hasNoWayOn);
     const contradicted = new Set(
       components.filter(({ index }) => this.solved[index] !== true).flatMap(({ nodes }) => nodes.map((node) => structure.islandOf[node])),
     );
     silenceQuietBlocks(network, branches, readings, (node) => !contradicted.has(structure.islandOf[node]));
     readings.vKnown[REFERENCE] = 1;
+    problems.push(...unreliable(network, readings));
     return problems;
+  }
+
+  private noteCondition(condition: number | undefined): void {
+    this.condition =
+      condition === undefined || this.condition === undefined ? undefined : Math.max(this.condition, condition);
   }
 
   /** Whether a node lies in a component that was solved; the reference node always does. */
@@ -74,6 +95,12 @@ export class Engine {
     if (node === REFERENCE) return true;
     const index = this.current?.structure.componentOf[node] ?? -1;
     return this.solved[index] === true;
+  }
+
+  /** Whether a node lies in a component that equations link to others. */
+  isLinked(node: number): boolean {
+    const { structure } = this.current ?? {};
+    return (structure?.systemOf[structure.componentOf[node] ?? -1] ?? -1) >= 0;
   }
 
   /** Whether a given current without a way on at its other end enters the component. */
@@ -93,8 +120,13 @@ export class Engine {
     let prepared = this.prepared.get(pattern);
     if (prepared === undefined) {
       const structure = analyseStructure(this.network, this.branches);
-      const nodal = structure.components.map((component) => new NodalForm(this.network, structure, component));
-      prepared = { structure, nodal };
+      const nodal = structure.components.map((component) =>
+        structure.systemOf[component.index] === -1 ? new NodalForm(this.network, structure, component) : undefined,
+      );
+      const linked = structure.systems.map((system) =>
+        prepareLinkedSystem(this.network, structure, system, this.branches),
+      );
+      prepared = { structure, nodal, linked };
       this.prepared.set(pattern, prepared);
     }
     this.current = prepared;
@@ -134,7 +166,33 @@ function noReference(network: Network, structure: Structure): Problem[] {
     else nodes.push(node);
   });
   return Array.from(nodesOf, ([island, nodes]) => {
-    const rows = network.elements.flatMap((_, row) => (islandOf[network.first[row] ?? 0] === island ? [row] : []));
+    const rows = Array.from(network.first, (_, row) => row).filter((row) => islandOf[network.first[row] ?? 0] === island);
     return noReferenceProblem(network, nodes, rows);
   });
+}
+
+/** A reading may be off by so much of itself, or by so much of the largest of its kind, before it is said. */
+const WORST_OF_ITSELF = 1e-6;
+const WORST_OF_LARGEST = 1e-9;
+
+/** Readings whose digits rounding may have taken; those that are nothing beside the largest of their kind do not count. */
+function unreliable(network: Network, readings: Readings): Problem[] {
+  const { vRe, vIm, vKnown, vError, iRe, iIm, iKnown, iError } = readings;
+  const nodes = doubtful(vRe, vIm, vKnown, vError);
+  const rows = doubtful(iRe, iIm, iKnown, iError);
+  return nodes.length + rows.length === 0 ? [] : [notReliableProblem(network, nodes, rows)];
+}
+
+function doubtful(re: Float64Array, im: Float64Array, known: Uint8Array, error: Float64Array): number[] {
+  let largest = 0;
+  for (let at = 0; at < re.length; at++) {
+    if (known[at] === 1) largest = Math.max(largest, Math.hypot(re[at] ?? 0, im[at] ?? 0));
+  }
+  const found: number[] = [];
+  for (let at = 0; at < re.length; at++) {
+    const off = error[at] ?? 0;
+    if (known[at] !== 1 || off <= WORST_OF_LARGEST * largest) continue;
+    if (off > WORST_OF_ITSELF * Math.hypot(re[at] ?? 0, im[at] ?? 0)) found.push(at);
+  }
+  return found;
 }

@@ -3,6 +3,7 @@ import { planElimination } from '../linear/elimination-plan';
 import { StarMesh } from '../linear/star-mesh';
 import { pathVoltage } from './given-voltages';
 import type { Network } from './network';
+import { REFERENCE } from './network';
 import { polishCurrents } from './polish-currents';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
@@ -19,6 +20,9 @@ const MOST_KEPT = 16;
 
 /** Above this, the network is so near to having no unique solution that the branch form is to look at it. */
 const TRUSTED_AMPLIFICATION = 1e7;
+
+/** Roundings on the way from the values to the readings that add up, by measurement against exact arithmetic, no further. */
+const ROUNDINGS = 10;
 
 const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
 
@@ -74,16 +78,31 @@ export class NodalForm {
     }
     this.polish(branches, readings);
     for (const row of component.innerCurrents) {
-      if (component.slotOfRow.has(row)) {
-        this.readVoltage(row, readings);
-      } else {
-        const a = this.network.first[row] ?? 0;
-        const b = this.network.second[row] ?? 0;
-        readings.dRe[row] = (readings.vRe[a] ?? 0) - (readings.vRe[b] ?? 0);
-        readings.dIm[row] = (readings.vIm[a] ?? 0) - (readings.vIm[b] ?? 0);
-      }
+      if (component.slotOfRow.has(row)) this.readVoltage(row, readings);
+      else readings.readDifference(this.network.first, this.network.second, row);
     }
+    this.estimateErrors(branches, readings);
     return true;
+  }
+
+  /**
+   * A relative error of some roundings in every element's value is a force of that part of its voltage in series with
+   * it; the condition says what such forces come to in voltages. The currents have, beside their part of that, what
+   * cancellation left of the voltages they came from.
+   */
+  private estimateErrors(branches: BranchTable, readings: Readings): void {
+    const { component } = this;
+    const relative = ROUNDINGS * Number.EPSILON * (1 + (this.condition ?? 0));
+    let largest = 0;
+    for (const row of component.admittances) {
+      largest = Math.max(largest, Math.abs(readings.dRe[row] ?? 0) + Math.abs(readings.dIm[row] ?? 0));
+    }
+    for (const node of component.nodes) readings.vError[node] = node === REFERENCE ? 0 : relative * largest;
+    for (const row of component.admittances) {
+      const i = Math.abs(readings.iRe[row] ?? 0) + Math.abs(readings.iIm[row] ?? 0);
+      readings.dError[row] = relative * largest;
+      readings.iError[row] = (readings.iError[row] ?? 0) + relative * i;
+    }
   }
 
   /**

@@ -15,7 +15,7 @@ const WORTHWHILE = 4;
  * known, Kirchhoff's current law gives it from them.
  *
  * `errorOf` gives each admittance's current a bound on its error; only the bounds decide, so a current is never
- * replaced by a worse one. Nodes with a given voltage are passed over: a current there is itself found by the law.
+ * replaced by a worse one; the bounds that are left are noted in the readings. Nodes with a given voltage are passed over: a current there is itself found by the law.
  */
 export function polishCurrents(
   network: Network,
@@ -32,8 +32,9 @@ export function polishCurrents(
     for (const [node, rows] of around) {
       if (improveAt(network, node, rows, branches, readings, errors)) changed = true;
     }
-    if (!changed) return;
+    if (!changed) break;
   }
+  for (const [row, error] of errors) readings.iError[row] = error;
 }
 
 /** The rows at each node of the component that no given voltage touches; both ends on one node do not count. */

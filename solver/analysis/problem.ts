@@ -8,11 +8,24 @@
  * - `voltageLoop`: a loop of voltage sources and ideal connections alone.
  * - `currentCutSet`: current sources that alone join two parts of the network.
  * - `resonance`: a lossless resonance exactly at the frequency asked for.
+ * - `noFeedback`: an ideal amplifier with no way from its output back to its inputs.
+ * - `noData`: an element is known from a table that does not reach the frequency asked for.
  * - `singular`: the equations have no unique solution for any other reason.
+ * - `notReliable`: solved, but some readings may have lost too many digits to rounding.
  * - `notFinite`: values so large or so small that they leave the range of the arithmetic.
  */
 export type ProblemKind =
-  'invalid' | 'noReference' | 'floatingNode' | 'voltageLoop' | 'currentCutSet' | 'resonance' | 'singular' | 'notFinite';
+  | 'invalid'
+  | 'noReference'
+  | 'floatingNode'
+  | 'voltageLoop'
+  | 'currentCutSet'
+  | 'noFeedback'
+  | 'noData'
+  | 'resonance'
+  | 'singular'
+  | 'notReliable'
+  | 'notFinite';
 
 /** A problem in words, with the elements and the nodes at fault by their names in the element list. */
 export interface Problem {

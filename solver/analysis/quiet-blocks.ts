@@ -1,5 +1,5 @@
 import type { BranchTable } from '../elements/branch-table';
-import { ADMITTANCE, GIVEN_CURRENT } from '../elements/branch-table';
+import { ADMITTANCE, EQUATION, GIVEN_CURRENT } from '../elements/branch-table';
 import type { Network } from './network';
 import type { Readings } from './readings';
 
@@ -35,8 +35,9 @@ export function silenceQuietBlocks(
   }
 }
 
+/** Whether a row may drive others. One with an equation may, by what drives the rows that stand in it. */
 function isLive(row: number, branches: BranchTable): boolean {
-  return branches.form[row] !== ADMITTANCE && !branches.isGivenZero(row);
+  return branches.form[row] === EQUATION || (branches.form[row] !== ADMITTANCE && !branches.isGivenZero(row));
 }
 
 function silence(row: number, branches: BranchTable, readings: Readings): void {

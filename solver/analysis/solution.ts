@@ -12,7 +12,8 @@ export interface PowerBalance {
 /**
  * The sinusoidal steady state at one frequency. Every phasor is rms, on the cosine, time dependence e^(+jωt). The
  * current of an element is positive when it enters at its first node, for a source too; so a positive active power
- * is absorbed. A method answers `undefined` where the quantity is not determined, or the name is not in the list.
+ * is absorbed. An element with further pairs of nodes has further ports: `port` counts them from 0; an amplifier's are
+ * its inputs and its output against the reference node. A method answers `undefined` where the quantity is not determined, or the name is not in the list.
  */
 export interface Solution {
   readonly ok: true;
@@ -21,11 +22,15 @@ export interface Solution {
   /** The voltage of a node over the reference node, V. */
   voltage(node: string): Complex | undefined;
   /** The voltage of an element's first node over its second, V; determined also where no reference node is. */
-  elementVoltage(id: string): Complex | undefined;
+  elementVoltage(id: string, port?: number): Complex | undefined;
   /** The current through an element from its first node to its second, A. */
-  current(id: string): Complex | undefined;
-  /** The complex power V·I* that an element absorbs, VA: P is the real part, Q the imaginary part. */
+  current(id: string, port?: number): Complex | undefined;
+  /** The complex power V·I* that an element absorbs, over all its ports, VA: P is the real part, Q the imaginary part. */
   power(id: string): Complex | undefined;
+  /** An estimate of how far off a node's voltage may be, V: from the condition, or the running error of the arithmetic. */
+  voltageError(node: string): number | undefined;
+  /** The same for an element's current, A. */
+  currentError(id: string, port?: number): number | undefined;
   /**
    * The largest relative error in the equations as solved: at each node |Σi| / Σ|i|, and for each element the
    * difference between its voltage and that of its nodes over the larger node voltage. A small residual is needed

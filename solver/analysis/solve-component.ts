@@ -1,6 +1,14 @@
 import type { BranchTable } from '../elements/branch-table';
+import type { BranchSystem } from './branch-form';
 import { solveInBranchForm } from './branch-form';
-import { floatingProblem, rangeProblem, singularProblem, tooLargeProblem, voltageLoopProblem } from './diagnosis';
+import {
+  floatingProblem,
+  noDataProblem,
+  rangeProblem,
+  singularProblem,
+  tooLargeProblem,
+  voltageLoopProblem,
+} from './diagnosis';
 import { readGivenVoltages } from './given-voltage-currents';
 import { currentsAgree, loopAgrees } from './given-voltages';
 import type { Network } from './network';
@@ -32,10 +40,15 @@ export function checkComponent(
   structure: Structure,
   component: Component,
   branches: BranchTable,
+  frequency: number,
 ): ComponentCheck {
+  const withoutData = [...component.admittances, ...component.equations].filter((row) => branches.isUnknown[row] === 1);
+  if (withoutData.length > 0) {
+    return { verdict: 'unsolvable', problems: [noDataProblem(network, withoutData, frequency)] };
+  }
   const outOfRange = rowsOutOfRange(component, branches);
   if (outOfRange.length > 0) {
-    return { verdict: 'unsolvable', problems: [rangeProblem(network, component, outOfRange)] };
+    return { verdict: 'unsolvable', problems: [rangeProblem(network, [component], outOfRange)] };
   }
   const problems: Problem[] = [];
   let verdict: ComponentCheck['verdict'] = 'sound';
@@ -72,10 +85,10 @@ export function solveComponent(
   const problems: Problem[] = [];
   const unknown = { nodes: new Set<number>(), currents: new Set<number>(), voltages: new Set<number>() };
   if (!nodal.solve(branches, readings)) {
-    const outcome = solveInBranchForm(network, component, branches, readings);
-    if (outcome === 'tooLarge') return { solved: false, problems: [tooLargeProblem(network, component, frequency)] };
+    const outcome = solveInBranchForm(network, asSystem(component), branches, readings);
+    if (outcome === 'tooLarge') return { solved: false, problems: [tooLargeProblem(network, [component], frequency)] };
     if (outcome !== 'solved') {
-      problems.push(singularProblem(network, branches, component, outcome, frequency));
+      problems.push(singularProblem(network, branches, [component], outcome, frequency));
       if (!outcome.consistent) return { solved: false, problems };
       for (const node of outcome.nodes) unknown.nodes.add(node);
       for (const row of outcome.currents) unknown.currents.add(row);
@@ -83,7 +96,7 @@ export function solveComponent(
     }
   }
   readGivenVoltages(network, structure, component, branches, readings);
-  if (!isInRange(component, readings)) return { solved: false, problems: [rangeProblem(network, component, [])] };
+  if (!isInRange(component, readings)) return { solved: false, problems: [rangeProblem(network, [component], [])] };
 
   for (const node of component.nodes) readings.vKnown[node] = component.grounded && !unknown.nodes.has(node) ? 1 : 0;
   for (const row of component.admittances) {
@@ -97,6 +110,13 @@ export function solveComponent(
   }
   for (const { closing } of component.loops) readings.dKnown[closing] = 1;
   return { solved: true, problems };
+}
+
+/** A component by itself, with its root at 0 V. */
+function asSystem(component: Component): BranchSystem {
+  const { nodes, admittances, treeVoltages, equations, innerCurrents, outerCurrents } = component;
+  const pinned = new Set([nodes[0] ?? 0]);
+  return { nodes, pinned, admittances, treeVoltages, equations, currents: [...innerCurrents, ...outerCurrents] };
 }
 
 function rowsOutOfRange(component: Component, branches: BranchTable): number[] {
@@ -115,7 +135,15 @@ function rowsOutOfRange(component: Component, branches: BranchTable): number[] {
     const size = Math.max(Math.abs(sRe[row] ?? 0), Math.abs(sIm[row] ?? 0));
     if (size !== 0 && !inRange(size)) faulty.push(row);
   }
+  for (const row of component.equations) {
+    const { re, im } = branches.equations[row] ?? { re: [], im: [] };
+    if (re.some((part, term) => !isNothingOr(inRange, Math.max(Math.abs(part), Math.abs(im[term] ?? 0))))) faulty.push(row);
+  }
   return faulty;
+}
+
+function isNothingOr(inRange: (size: number) => boolean, size: number): boolean {
+  return size === 0 || inRange(size);
 }
 
 /** Whether the given currents into a component without a reference add up to zero, as Kirchhoff's law wants. */
@@ -137,10 +165,10 @@ function netCurrentIsZero(
 }
 
 /** Whether all readings are finite, and small enough that a power, their product, is too. */
-function isInRange(component: Component, readings: Readings): boolean {
+export function isInRange(component: Component, readings: Readings): boolean {
   const { vRe, vIm, dRe, dIm, iRe, iIm } = readings;
   const fits = (array: Float64Array, at: number): boolean => Math.abs(array[at] ?? Infinity) <= LARGEST_READING;
-  const rows = [...component.admittances, ...component.treeVoltages, ...component.innerCurrents];
+  const rows = [...component.admittances, ...component.treeVoltages, ...component.innerCurrents, ...component.equations];
   return (
     component.nodes.every((node) => fits(vRe, node) && fits(vIm, node)) &&
     rows.every((row) => fits(dRe, row) && fits(dIm, row) && fits(iRe, row) && fits(iIm, row))

@@ -3,7 +3,7 @@ import { ADMITTANCE, GIVEN_CURRENT } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
 import { validateElementList } from '../elements/validate-element-list';
 import { Engine } from './engine';
-import { REFERENCE } from './network';
+import { REFERENCE, rowOf } from './network';
 import type { Problem } from './problem';
 import { problem } from './problem';
 import type { PowerBalance, Solution } from './solution';
@@ -34,7 +34,9 @@ export function faultOfFrequency(frequency: unknown): string | undefined {
  * is not finite.
  *
  * Method: nodal form with given voltages kept as such, by star-mesh elimination without a stored diagonal (see
- * `StarMesh`); where a pivot cancels, branch form with complete pivoting (see `solveInBranchForm`).
+ * `StarMesh`); parts that controlled sources, transformers and the like link, in modified nodal form with threshold
+ * pivoting (see `solveInModifiedNodalForm`); where a pivot cancels, branch form with complete pivoting (see
+ * `solveInBranchForm`).
  */
 export function solve(list: ElementList, options: SolveOptions): Solution | Problem {
   const checked = validateElementList(list);
@@ -53,7 +55,7 @@ export function solve(list: ElementList, options: SolveOptions): Solution | Prob
 function isAnythingKnown(engine: Engine): boolean {
   const { network, branches, readings } = engine;
   if (readings.vKnown.includes(1, REFERENCE + 1)) return true;
-  return network.elements.some((_, row) => {
+  return network.laws.some((_, row) => {
     if (readings.iKnown[row] !== 1) return false;
     return (
       branches.form[row] !== GIVEN_CURRENT ||
@@ -64,7 +66,7 @@ function isAnythingKnown(engine: Engine): boolean {
 
 function toSolution(engine: Engine, frequency: number, problems: readonly Problem[]): Solution {
   const { network, branches, readings } = engine;
-  const { nodeIndex, elementIndex } = network;
+  const { nodeIndex } = network;
 
   const isSolved = (row: number): boolean =>
     engine.isSolved(network.first[row] ?? 0) && engine.isSolved(network.second[row] ?? 0);
@@ -72,21 +74,32 @@ function toSolution(engine: Engine, frequency: number, problems: readonly Proble
     const at = nodeIndex.get(node);
     return at === undefined || readings.vKnown[at] !== 1 ? undefined : complex(readings.vRe[at], readings.vIm[at]);
   };
-  const elementVoltage = (id: string): Complex | undefined => {
-    const at = elementIndex.get(id);
-    return at === undefined || readings.dKnown[at] !== 1 ? undefined : complex(readings.dRe[at], readings.dIm[at]);
+  const elementVoltage = (id: string, port = 0): Complex | undefined => {
+    const at = rowOf(network, id, port);
+    return readings.dKnown[at] === 1 ? complex(readings.dRe[at], readings.dIm[at]) : undefined;
   };
-  const current = (id: string): Complex | undefined => {
-    const at = elementIndex.get(id);
-    return at === undefined || readings.iKnown[at] !== 1 ? undefined : complex(readings.iRe[at], readings.iIm[at]);
+  const current = (id: string, port = 0): Complex | undefined => {
+    const at = rowOf(network, id, port);
+    return readings.iKnown[at] === 1 ? complex(readings.iRe[at], readings.iIm[at]) : undefined;
+  };
+  const powerAt = (row: number): Complex | undefined => {
+    if (readings.dKnown[row] === 1 && readings.iKnown[row] === 1) return powerOf(engine, row);
+    // Nothing times something finite: an open circuit's voltage, or an ideal connection's current, need not be known.
+    return branches.form[row] !== ADMITTANCE && branches.isGivenZero(row) && isSolved(row) ? complex(0, 0) : undefined;
   };
   const power = (id: string): Complex | undefined => {
-    const at = elementIndex.get(id);
-    if (at === undefined) return undefined;
-    if (readings.dKnown[at] === 1 && readings.iKnown[at] === 1) return powerOf(engine, at);
-    // Nothing times something finite: an open circuit's voltage, or an ideal connection's current, need not be known.
-    return branches.form[at] !== ADMITTANCE && branches.isGivenZero(at) && isSolved(at) ? complex(0, 0) : undefined;
+    const place = network.elementIndex.get(id);
+    if (place === undefined) return undefined;
+    let sum: Complex | undefined;
+    for (let row = network.rowStart[place] ?? 0; row < (network.rowStart[place + 1] ?? 0); row++) {
+      const part = powerAt(row);
+      if (part === undefined) return undefined;
+      sum = sum === undefined ? part : complex(sum.re + part.re, sum.im + part.im);
+    }
+    return sum;
   };
+  const errorAt = (errors: Float64Array, known: Uint8Array, at: number): number | undefined =>
+    known[at] === 1 ? (errors[at] ?? 0) : undefined;
   return {
     ok: true,
     frequency,
@@ -94,6 +107,8 @@ function toSolution(engine: Engine, frequency: number, problems: readonly Proble
     elementVoltage,
     current,
     power,
+    voltageError: (node) => errorAt(readings.vError, readings.vKnown, nodeIndex.get(node) ?? -1),
+    currentError: (id, port = 0) => errorAt(readings.iError, readings.iKnown, rowOf(network, id, port)),
     residual: residualOf(engine),
     condition: engine.condition,
     balance: balanceOf(engine),
@@ -130,7 +145,7 @@ function balanceOf(engine: Engine): PowerBalance {
     im += q;
     scale += Math.hypot(p, q);
   };
-  for (let row = 0; row < network.elements.length; row++) {
+  for (let row = 0; row < network.rowCount; row++) {
     const a = network.first[row] ?? 0;
     const b = network.second[row] ?? 0;
     const iRe = readings.iRe[row] ?? 0;

@@ -1,5 +1,5 @@
 import type { BranchTable } from '../elements/branch-table';
-import { ADMITTANCE, GIVEN_CURRENT, GIVEN_VOLTAGE } from '../elements/branch-table';
+import { ADMITTANCE, EQUATION, GIVEN_CURRENT, GIVEN_VOLTAGE } from '../elements/branch-table';
 import { DisjointSets } from '../linear/disjoint-sets';
 import type { EliminationPlan, PlanGraph } from '../linear/elimination-plan';
 import { planElimination } from '../linear/elimination-plan';
@@ -7,9 +7,10 @@ import type { Network } from './network';
 import { REFERENCE } from './network';
 
 /**
- * A conducting component: nodes that admittances and given voltages tie together, not counting ties by way of the
- * reference node, whose voltage is known whatever happens. Between components there are only given currents, open
- * circuits and the reference node, so each is solved by itself, and what is wrong in one does no harm to another.
+ * A conducting component: nodes that admittances, given voltages and ports with an equation tie together, not counting
+ * ties by way of the reference node, whose voltage is known whatever happens. Between components there are only given
+ * currents, open ports and the reference node, so each is solved by itself unless an equation links it to others (see
+ * `LinkedSystem`), and what is wrong in one does no harm to another.
  */
 export interface Component {
   readonly index: number;
@@ -26,6 +27,8 @@ export interface Component {
   readonly innerCurrents: readonly number[];
   /** Rows of given current (open circuits too) with just one end in it. */
   readonly outerCurrents: readonly number[];
+  /** Rows with an equation. */
+  readonly equations: readonly number[];
   /** Its nodal equations as a graph, and how they are solved. */
   readonly graph: PlanGraph;
   readonly plan: EliminationPlan;
@@ -35,6 +38,12 @@ export interface Component {
    * is not among the equations, and in a component without a reference what leaves it adds up to zero.
    */
   readonly slotOfRow: ReadonlyMap<number, number>;
+}
+
+/** Components that equations link: a transformer's sides, what an amplifier senses and what it drives. */
+export interface LinkedSystem {
+  readonly index: number;
+  readonly components: readonly Component[];
 }
 
 export interface VoltageLoop {
@@ -48,6 +57,9 @@ export interface VoltageLoop {
  */
 export interface Structure {
   readonly components: readonly Component[];
+  readonly systems: readonly LinkedSystem[];
+  /** The linked system of each component, by index; −1 for one that no equation touches. */
+  readonly systemOf: Int32Array;
   /** The component of each node. The reference node, which every grounded component has, stands under a component of its own. */
   readonly componentOf: Int32Array;
   /** Sets of nodes that elements of any form join: one number a set. */
@@ -67,13 +79,15 @@ export interface Structure {
   readonly onLoop: Uint8Array;
 }
 
+const PATTERN_LETTERS = { [ADMITTANCE]: 'y', [GIVEN_VOLTAGE]: 'v', [GIVEN_CURRENT]: 'i', [EQUATION]: 'e' } as Readonly<Record<number, string>>;
+
 /** A text that is the same for two tables when their structure is. */
 export function patternOf(branches: BranchTable): string {
   let pattern = '';
   for (let row = 0; row < branches.size; row++) {
     const form = branches.form[row] ?? ADMITTANCE;
-    pattern += form === ADMITTANCE ? 'y' : form === GIVEN_VOLTAGE ? 'v' : 'i';
-    if (form !== ADMITTANCE && branches.isGivenZero(row)) pattern += '0';
+    pattern += PATTERN_LETTERS[form] ?? '';
+    if ((form === GIVEN_VOLTAGE || form === GIVEN_CURRENT) && branches.isGivenZero(row)) pattern += '0';
   }
   return pattern;
 }
@@ -157,6 +171,7 @@ export function analyseStructure(network: Network, branches: BranchTable): Struc
 
   return {
     components,
+    ...linkComponents(network, branches, components, componentOf),
     componentOf,
     islandOf: Int32Array.from({ length: nodeCount }, (_, node) => joined.find(node)),
     referenceIsland: joined.find(REFERENCE),
@@ -257,16 +272,63 @@ function numberVertices(nodes: readonly number[], merged: DisjointSets, vertexOf
   return Int32Array.from(representatives);
 }
 
+/**
+ * Joins the components that the rows of an equation lie in. An open port that nothing senses links nothing; the
+ * reference node, whose voltage is known, links nothing either.
+ */
+function linkComponents(
+  { first, second }: Network,
+  branches: BranchTable,
+  components: readonly Component[],
+  componentOf: Int32Array,
+): Pick<Structure, 'systems' | 'systemOf'> {
+  const linked = new DisjointSets(components.length);
+  const touched = new Set<number>();
+  for (let row = 0; row < branches.size; row++) {
+    const equation = branches.equations[row];
+    if (equation === undefined) continue;
+    const homes = new Set(
+      [row, ...equation.row]
+        .flatMap((of) => [first[of] ?? 0, second[of] ?? 0])
+        .filter((node) => node !== REFERENCE)
+        .map((node) => componentOf[node] ?? 0),
+    );
+    if (homes.size === 0) homes.add(componentOf[REFERENCE] ?? 0);
+    const [one] = homes;
+    for (const home of homes) {
+      touched.add(home);
+      if (one !== undefined) linked.union(one, home);
+    }
+  }
+  const systemOf = new Int32Array(components.length).fill(-1);
+  const members: Component[][] = [];
+  const numberOf = new Map<number, number>();
+  for (const component of components) {
+    if (!touched.has(component.index)) continue;
+    const set = linked.find(component.index);
+    const known = numberOf.get(set);
+    const index = known ?? members.length;
+    if (known === undefined) {
+      numberOf.set(set, index);
+      members.push([]);
+    }
+    systemOf[component.index] = index;
+    members[index]?.push(component);
+  }
+  return { systems: members.map((of, index) => ({ index, components: of })), systemOf };
+}
+
 interface ComponentRows {
   readonly admittances: number[];
   readonly treeVoltages: number[];
   readonly loops: VoltageLoop[];
   readonly innerCurrents: number[];
   readonly outerCurrents: number[];
+  readonly equations: number[];
 }
 
 function emptyRows(): ComponentRows {
-  return { admittances: [], treeVoltages: [], loops: [], innerCurrents: [], outerCurrents: [] };
+  return { admittances: [], treeVoltages: [], loops: [], innerCurrents: [], outerCurrents: [], equations: [] };
 }
 
 function sortRows(
@@ -286,6 +348,7 @@ function sortRows(
   for (let row = 0; row < branches.size; row++) {
     const home = homeOf(row);
     if (branches.form[row] === ADMITTANCE) sorted[home]?.admittances.push(row);
+    if (branches.form[row] === EQUATION) sorted[home]?.equations.push(row);
     if (branches.form[row] !== GIVEN_CURRENT) continue;
     const ends = [first[row] ?? 0, second[row] ?? 0].filter((node) => node !== REFERENCE);
     const homes = new Set(ends.map((node) => componentOf[node] ?? 0));

@@ -1,10 +1,22 @@
-import type { BranchTable } from './branch-table';
 import { capacitor } from './capacitor';
+import {
+  currentControlledCurrentSource,
+  currentControlledVoltageSource,
+  voltageControlledCurrentSource,
+  voltageControlledVoltageSource,
+} from './controlled-sources';
+import { coupledInductors } from './coupled-inductors';
 import { currentSource } from './current-source';
-import type { ElementDefinition, Excitation, UnknownFields } from './element-definition';
+import type { ElementDefinition, UnknownFields } from './element-definition';
 import type { Element, ElementKind } from './element-list';
+import { idealTransformer } from './ideal-transformer';
+import { impedance } from './impedance';
 import { inductor } from './inductor';
+import type { Law } from './law';
+import { line } from './line';
+import { operationalAmplifier } from './operational-amplifier';
 import { resistor } from './resistor';
+import { twoPort } from './two-port';
 import { voltageSource } from './voltage-source';
 
 type ElementByKind = { readonly [K in ElementKind]: Extract<Element, { kind: K }> };
@@ -14,8 +26,18 @@ const DEFINITIONS: { readonly [K in ElementKind]: ElementDefinition<ElementByKin
   resistor,
   capacitor,
   inductor,
+  impedance,
+  coupledInductors,
+  idealTransformer,
   voltageSource,
   currentSource,
+  voltageControlledVoltageSource,
+  voltageControlledCurrentSource,
+  currentControlledVoltageSource,
+  currentControlledCurrentSource,
+  operationalAmplifier,
+  twoPort,
+  line,
 };
 
 const KINDS: ReadonlySet<string> = new Set(Object.keys(DEFINITIONS));
@@ -40,17 +62,23 @@ export function faultOfFields(kind: ElementKind, fields: UnknownFields): string 
   return DEFINITIONS[kind].faultOf(fields);
 }
 
-function stamp<K extends ElementKind>(
-  kind: K,
-  element: ElementByKind[K],
-  excitation: Excitation,
-  branches: BranchTable,
-  row: number,
-): void {
-  DEFINITIONS[kind].stamp(element, excitation, branches, row);
+/** How many nodes an element of the kind has, by its fields. */
+export function nodeCountOf(kind: ElementKind, fields: UnknownFields): number {
+  const { nodeCount } = DEFINITIONS[kind];
+  return typeof nodeCount === 'number' ? nodeCount : nodeCount(fields);
 }
 
-/** Writes what every element is at the frequency into the table, row for row. */
-export function stampAll(elements: readonly Element[], excitation: Excitation, branches: BranchTable): void {
-  elements.forEach((element, row) => stamp(element.kind, element, excitation, branches, row));
+/** The ports of an element, as pairs of nodes. */
+export function portsOf(element: Element): readonly (readonly [string, string])[] {
+  return definitionOf(element).ports(element);
+}
+
+/** What an element is: one law for each of its ports. */
+export function lawsOf(element: Element): readonly Law[] {
+  return definitionOf(element).laws(element);
+}
+
+/** The definition of an element's own kind; the table is keyed by kind, which the compiler cannot follow. */
+function definitionOf(element: Element): ElementDefinition<Element> {
+  return DEFINITIONS[element.kind] as unknown as ElementDefinition<Element>;
 }

@@ -1,6 +1,6 @@
 import type { UnknownFields } from './element-definition';
 import type { Element, ElementList } from './element-list';
-import { elementKinds, faultOfFields, isElementKind } from './registry';
+import { elementKinds, faultOfFields, isElementKind, nodeCountOf } from './registry';
 
 export type ElementListResult =
   | { readonly ok: true; readonly list: ElementList }
@@ -12,8 +12,8 @@ const MOST_ELEMENTS = 20_000;
 const LONGEST_NAME = 200;
 
 /**
- * Checks that a value from outside is an element list, version 1: the shape, the kinds, two named nodes each, finite
- * numbers, unique ids. Fields that are not known are passed over. Whether the network has a solution is not asked
+ * Checks that a value from outside is an element list, version 1: the shape, the kinds, the named nodes of each, finite
+ * numbers, unique ids, sensed elements that are there. Fields that are not known are passed over. Whether the network has a solution is not asked
  * here. Gives the same elements back, typed.
  */
 export function validateElementList(value: unknown): ElementListResult {
@@ -22,28 +22,49 @@ export function validateElementList(value: unknown): ElementListResult {
   const { elements } = value;
   if (!Array.isArray(elements)) return refuse('The element list must have an array of elements.');
   if (elements.length > MOST_ELEMENTS) return refuse(`The element list has more than ${MOST_ELEMENTS} elements.`);
-  const ids = new Set<string>();
+  const ids = new Map<string, UnknownFields>();
   for (const [place, element] of (elements as readonly unknown[]).entries()) {
     const fault = faultOf(element, place, ids);
+    if (fault !== undefined) return refuse(fault);
+  }
+  for (const [id, { sensedElement }] of ids) {
+    const fault = typeof sensedElement === 'string' ? faultOfSensing(id, sensedElement, ids) : undefined;
     if (fault !== undefined) return refuse(fault);
   }
   return { ok: true, list: { version: 1, elements: elements as readonly Element[] } };
 }
 
-function faultOf(element: unknown, place: number, ids: Set<string>): string | undefined {
+function faultOf(element: unknown, place: number, ids: Map<string, UnknownFields>): string | undefined {
   if (!isRecord(element)) return `Element ${place + 1} of the list is not an object.`;
   const { id, kind, nodes } = element;
   if (!isName(id)) return `Element ${place + 1} of the list needs an id of 1 to ${LONGEST_NAME} characters.`;
   if (ids.has(id)) return `The id ${id} is given twice; every element needs its own.`;
-  ids.add(id);
+  ids.set(id, element);
   if (typeof kind !== 'string' || !isElementKind(kind)) {
     return `Element ${id} has no known kind; the kinds are ${elementKinds().join(', ')}.`;
   }
-  if (!Array.isArray(nodes) || nodes.length !== 2 || !nodes.every(isName)) {
-    return `Element ${id} needs two nodes, each a name of 1 to ${LONGEST_NAME} characters.`;
-  }
   const fault = faultOfFields(kind, element);
-  return fault === undefined ? undefined : `Element ${id} ${fault}.`;
+  if (fault !== undefined) return `Element ${id} ${fault}.`;
+  const count = nodeCountOf(kind, element);
+  if (!Array.isArray(nodes) || nodes.length !== count || !nodes.every(isName)) {
+    return `Element ${id} needs ${COUNTS[count] ?? count} nodes, each a name of 1 to ${LONGEST_NAME} characters.`;
+  }
+  return undefined;
+}
+
+const COUNTS: Readonly<Record<number, string>> = { 2: 'two', 3: 'three', 4: 'four' };
+
+/** Only kinds that sense have this field, by their definitions; others may carry it as a field that is not known. */
+function faultOfSensing(id: string, sensed: string, ids: ReadonlyMap<string, UnknownFields>): string | undefined {
+  const kind = ids.get(id)?.['kind'];
+  if (kind !== 'currentControlledVoltageSource' && kind !== 'currentControlledCurrentSource') return undefined;
+  const target = ids.get(sensed);
+  if (target === undefined) {
+    return `Element ${id} senses the current of ${sensed}, which is not in the list; name an element that is.`;
+  }
+  const { nodes } = target;
+  if (Array.isArray(nodes) && nodes.length === 2) return undefined;
+  return `Element ${id} senses the current of ${sensed}, which has more than two nodes; name an element with two.`;
 }
 
 function isRecord(value: unknown): value is UnknownFields {

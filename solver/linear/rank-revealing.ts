@@ -35,6 +35,8 @@ export interface DenseOutcome {
   /** A solution; of many, the one with the free unknowns at zero. Of no use unless `consistent`. */
   readonly re: Float64Array;
   readonly im: Float64Array;
+  /** A bound on the error of each unknown, but for what the null vectors leave free. */
+  readonly error: Float64Array;
   /** A basis of what may be added to a solution; empty at full rank. */
   readonly nullVectors: readonly NullVector[];
 }
@@ -53,11 +55,12 @@ export function solveDense(system: DenseSystem): DenseOutcome {
     if (left > (system.rightError[row] ?? 0)) consistent = false;
   }
   const solution = backSubstitute(system, rowOf, columnOf, rank, -1);
+  const bound = boundErrors(system, rowOf, columnOf, rank, solution);
   const nullVectors: NullVector[] = [];
   for (let free = rank; free < size; free++) {
     nullVectors.push(backSubstitute(system, rowOf, columnOf, rank, columnOf[free] ?? 0));
   }
-  return { rank, consistent, ...solution, nullVectors };
+  return { rank, consistent, ...solution, error: bound, nullVectors };
 }
 
 /** Finds the pivot of step k and eliminates with it; false when no entry that remains can be told from zero. */
@@ -170,6 +173,31 @@ function backSubstitute(
     xIm[column] = (sumIm * pRe - sumRe * pIm) / square;
   }
   return { re: xRe, im: xIm };
+}
+
+/** The back substitution once more, on the bounds of the errors of what went into it. */
+function boundErrors(
+  { size, re, im, error, rightError }: DenseSystem,
+  rowOf: Int32Array,
+  columnOf: Int32Array,
+  rank: number,
+  { re: xRe, im: xIm }: NullVector,
+): Float64Array {
+  const bound = new Float64Array(size);
+  for (let k = rank - 1; k >= 0; k--) {
+    const row = rowOf[k] ?? 0;
+    const base = row * size;
+    let sum = rightError[row] ?? 0;
+    for (let j = k; j < size; j++) {
+      const column = columnOf[j] ?? 0;
+      const a = Math.hypot(re[base + column] ?? 0, im[base + column] ?? 0);
+      const x = Math.abs(xRe[column] ?? 0) + Math.abs(xIm[column] ?? 0);
+      sum += ((error[base + column] ?? 0) + ROUNDING * a) * x + (j > k ? a * (bound[column] ?? 0) : 0);
+    }
+    const pivot = base + (columnOf[k] ?? 0);
+    bound[columnOf[k] ?? 0] = sum / Math.hypot(re[pivot] ?? 0, im[pivot] ?? 0);
+  }
+  return bound;
 }
 
 function swap(order: Int32Array, one: number, other: number): void {

@@ -88,8 +88,11 @@ describe('the element list in DEVELOPERS.md', () => {
       floatingNode: true,
       voltageLoop: true,
       currentCutSet: true,
+      noFeedback: true,
+      noData: true,
       resonance: true,
       singular: true,
+      notReliable: true,
       notFinite: true,
     };
     expect(tableOf(GUIDE, '| kind | when |').map(([kind]) => kind)).toEqual(Object.keys(kinds));

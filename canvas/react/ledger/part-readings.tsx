@@ -57,9 +57,7 @@ function entryWords(kind: ElementKind): string {
       return 'at plus';
     case 'currentSource':
       return 'where the arrow begins';
-    case 'resistor':
-    case 'capacitor':
-    case 'inductor':
+    default:
       return 'at the first pin';
   }
 }
