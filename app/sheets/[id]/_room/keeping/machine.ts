@@ -73,7 +73,7 @@ export type KeepingEvent =
   | { readonly type: 'hand'; readonly hand: Hand; readonly atMs: number };
 
 /** After the last change; a hand that pauses is a moment to save. */
-export const DEBOUNCE_MS = 600;
+export const DEBOUNCE_MS = 200;
 /** After the first change, however busy the hand is. */
 export const AT_MOST_MS = 3_000;
 /** An answer that takes longer is not worth calling “saving”. */
