@@ -38,6 +38,8 @@ export type { Problem, ProblemKind } from './analysis/problem';
 export type { PowerBalance, Solution } from './analysis/solution';
 export type { SolveOptions } from './analysis/steady-state';
 export { solve } from './analysis/steady-state';
+export type { Superposition, SuperpositionOptions, Total } from './analysis/superposition';
+export { sourceFrequencies, superpose, valueAt } from './analysis/superposition';
 export type { Sweep, SweepOptions, SweepOutput, SweepProblem, SweepTrace } from './analysis/sweep';
 export { sweep } from './analysis/sweep';
 

@@ -1,4 +1,4 @@
-import { formatQuantity, sameFrequency, solve, type Element, type ElementList, type Solution } from '@/solver';
+import { formatQuantity, superpose, type Solution } from '@/solver';
 import type { PartId, PinRef } from '../document/types';
 import type { Network } from './network';
 
@@ -50,35 +50,11 @@ export function findCautions(network: Network, frequencyHz: number, atOperating:
 
 type AtFrequency = { readonly frequencyHz: number; readonly solution: Solution };
 
+/** What could not be solved is passed over: the sheet says so elsewhere. */
 function solutionsAtAll(network: Network, frequencyHz: number, atOperating: Solution | null): AtFrequency[] {
-  const frequencies: number[] = [];
-  for (const element of network.list.elements) {
-    if (!('value' in element) || element.value.rms === 0) continue;
-    const own = element.value.frequency;
-    // Two that differ by rounding alone are one, or what is there would be counted twice.
-    const frequency = own === null || sameFrequency(own, frequencyHz) ? frequencyHz : own;
-    if (!frequencies.some((known) => sameFrequency(known, frequency))) frequencies.push(frequency);
-  }
-  const list = fixedFrequencies(network.list, frequencyHz);
-  return frequencies.flatMap((frequency): AtFrequency[] => {
-    if (frequency === frequencyHz) return atOperating ? [{ frequencyHz, solution: atOperating }] : [];
-    const answer = solve(list, { frequency });
-    return answer.ok ? [{ frequencyHz: frequency, solution: answer }] : [];
-  });
-}
-
-/** A source without a frequency of its own delivers at whichever is solved; here it must not at the others' ones. */
-function fixedFrequencies(list: ElementList, frequencyHz: number): ElementList {
-  const elements = list.elements.map((element): Element => {
-    switch (element.kind) {
-      case 'voltageSource':
-      case 'currentSource':
-        return { ...element, value: { ...element.value, frequency: element.value.frequency ?? frequencyHz } };
-      default:
-        return element;
-    }
-  });
-  return { ...list, elements };
+  const all = superpose(network.list, { operatingFrequency: frequencyHz, ...(atOperating && { known: atOperating }) });
+  if (!all.ok) return [];
+  return all.solutions.flatMap((solution) => (solution.ok ? [{ frequencyHz: solution.frequency, solution }] : []));
 }
 
 function total(solutions: readonly AtFrequency[], voltage: (solution: Solution) => { re: number; im: number } | undefined): Total {
