@@ -9,7 +9,8 @@ export interface SparsePattern {
 /**
  * A square complex matrix as a sum of contributions, each with its row and column; several may fall on one place. The
  * contributions are kept apart beside their sums, because a sum loses what is small in it: a residual that is taken
- * from the contributions still sees it.
+ * from the contributions still sees it. Rows beyond the size are no part of the matrix: a residual tells how far a
+ * solution is from keeping them too.
  */
 export class CoordinateMatrix {
   readonly pattern: SparsePattern;
@@ -21,16 +22,17 @@ export class CoordinateMatrix {
   readonly sumIm: Float64Array;
   /** The place of each contribution. */
   private readonly placeOf: Int32Array;
-
   constructor(
     size: number,
     readonly row: Int32Array,
     readonly column: Int32Array,
+    /** How many rows there are with those beyond the size. */
+    readonly rowCount = size,
   ) {
     const count = row.length;
     this.re = new Float64Array(count);
     this.im = new Float64Array(count);
-    this.placeOf = new Int32Array(count);
+    this.placeOf = new Int32Array(count).fill(-1);
     const byRow: number[][] = Array.from({ length: size }, () => []);
     for (let at = 0; at < count; at++) byRow[row[at] ?? 0]?.push(at);
     const rowStart = new Int32Array(size + 1);
@@ -59,7 +61,8 @@ export class CoordinateMatrix {
     sumRe.fill(0);
     sumIm.fill(0);
     for (let at = 0; at < placeOf.length; at++) {
-      const place = placeOf[at] ?? 0;
+      const place = placeOf[at] ?? -1;
+      if (place < 0) continue;
       sumRe[place] = (sumRe[place] ?? 0) + (re[at] ?? 0);
       sumIm[place] = (sumIm[place] ?? 0) + (im[at] ?? 0);
     }
