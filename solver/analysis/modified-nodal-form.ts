@@ -1,9 +1,10 @@
 import type { BranchTable } from '../elements/branch-table';
 import { ADMITTANCE, GIVEN_CURRENT, GIVEN_VOLTAGE } from '../elements/branch-table';
+import { ExtendedSolver, ExtendedVector } from '../linear/extended';
 import { SparseLu } from '../linear/sparse-lu';
 import { CoordinateMatrix } from '../linear/sparse-matrix';
 import type { ComplexVector } from '../linear/sparse-quality';
-import { refine, zeros } from '../linear/sparse-quality';
+import { zeros } from '../linear/sparse-quality';
 import type { BranchSystem } from './branch-form';
 import type { Network } from './network';
 import type { Readings } from './readings';
@@ -14,7 +15,7 @@ const STRONG_PIVOT = 1e-3;
 /** Above this, the network is so near to having no unique solution that the branch form is to look at it. */
 const TRUSTED_AMPLIFICATION = 1e7;
 
-/** Rounding errors of all terms of a line, with phases strewn about the circle, seldom come to more than so many of these. */
+/** Roundings of a value on its way into the matrix, and what strewn phases may have made too little of. */
 const SAFETY = 10;
 
 const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
@@ -22,15 +23,16 @@ const GOLDEN_ANGLE = Math.PI * (3 - Math.sqrt(5));
 /**
  * Solves components that equations link, in modified nodal form (Ho, Ruehli and Brennan 1975,
  * doi 10.1109/TCS.1975.1084079): node voltages, and the currents of given voltages and of rows with an equation. The
- * order of pivots is found once and kept for other frequencies and other values while its pivots stay strong; one step
- * of refinement.
+ * order of pivots is found once and kept for other frequencies and other values while its pivots stay strong. Refined in
+ * extended arithmetic from what the matrix is summed of, so that what is small in a sum still counts.
  */
 export class ModifiedNodalForm {
   private readonly matrix: CoordinateMatrix;
   private readonly lu: SparseLu;
   private readonly layout: Layout;
   private readonly size: number;
-  private readonly x: ComplexVector;
+  private readonly x = new ExtendedVector();
+  private readonly solver: ExtendedSolver;
   private readonly b: ComplexVector;
   private readonly work: ComplexVector;
   private hasOrder = false;
@@ -51,14 +53,14 @@ export class ModifiedNodalForm {
     });
     this.matrix = new CoordinateMatrix(this.size, Int32Array.from(rows), Int32Array.from(columns));
     this.lu = new SparseLu(this.matrix.pattern);
-    this.x = zeros(this.size);
+    this.solver = new ExtendedSolver(this.matrix, this.lu);
     this.b = zeros(this.size);
     this.work = zeros(this.size);
   }
 
   /** Writes all readings of the system; answers its condition, or undefined where the work cannot be trusted. */
   solve(branches: BranchTable, readings: Readings): number | undefined {
-    const { matrix, lu, x, b, work } = this;
+    const { matrix, x, b } = this;
     if (this.size === 0) return 1;
     this.filled = 0;
     this.walk(branches, (_row, _column, re, im) => {
@@ -68,12 +70,10 @@ export class ModifiedNodalForm {
     });
     matrix.sum();
     if (!this.factor()) return undefined;
-    const summed = { pattern: matrix.pattern, re: matrix.sumRe, im: matrix.sumIm };
     const condition = this.amplification(branches);
     if (!(condition < TRUSTED_AMPLIFICATION)) return undefined;
     this.loadRight(branches);
-    lu.solve(b.re, b.im, x.re, x.im);
-    refine(lu, summed, x, b, work);
+    if (!this.solver.solve(b.re, b.im, x)) return undefined;
     if (!x.re.every(Number.isFinite) || !x.im.every(Number.isFinite)) return undefined;
     this.write(branches, readings);
     return condition;
@@ -187,7 +187,7 @@ export class ModifiedNodalForm {
    * `Solution.condition`.
    */
   private amplification(branches: BranchTable): number {
-    const { b, x, system, layout } = this;
+    const { b, work, system, layout } = this;
     b.re.fill(0);
     b.im.fill(0);
     for (const row of system.admittances) {
@@ -210,81 +210,109 @@ export class ModifiedNodalForm {
         this.inject(layout.ofRow.get(row) ?? -1, size * Math.cos(angle), size * Math.sin(angle));
       }
     }
-    this.lu.solve(b.re, b.im, x.re, x.im);
+    this.lu.solve(b.re, b.im, work.re, work.im);
     let largest = 0;
     for (const row of system.admittances) {
       const [from, to] = this.ends(row);
-      const re = (x.re[from] ?? 0) - (x.re[to] ?? 0);
-      const im = (x.im[from] ?? 0) - (x.im[to] ?? 0);
+      const re = (work.re[from] ?? 0) - (work.re[to] ?? 0);
+      const im = (work.im[from] ?? 0) - (work.im[to] ?? 0);
       const size = Math.abs(re) + Math.abs(im);
       if (!(size <= largest)) largest = size;
     }
     return Math.max(1, largest);
   }
 
-  /** Writes the solution that stands in `x`, with the errors that a second solution, of rounding errors, tells. */
+  /** Writes the solution that stands in `x`, with their errors. */
   private write(branches: BranchTable, readings: Readings): void {
-    const { network, system, layout, x } = this;
-    const { first, second } = network;
-    const error = this.strewnRounding();
+    const { system, layout, x } = this;
+    const { first, second } = this.network;
     for (const [node, at] of layout.ofNode) {
       readings.vRe[node] = at < 0 ? 0 : (x.re[at] ?? 0);
       readings.vIm[node] = at < 0 ? 0 : (x.im[at] ?? 0);
-      readings.vError[node] = at < 0 ? 0 : sizeAt(error, at);
     }
+    for (const row of [...system.admittances, ...system.treeVoltages, ...system.equations]) this.readVoltage(row, readings);
     for (const row of system.admittances) {
-      readings.readDifference(first, second, row);
       const re = readings.dRe[row] ?? 0;
       const im = readings.dIm[row] ?? 0;
       const yRe = branches.yRe[row] ?? 0;
       const yIm = branches.yIm[row] ?? 0;
       readings.iRe[row] = yRe * re - yIm * im;
       readings.iIm[row] = yRe * im + yIm * re;
-      const [a, b] = this.ends(row);
-      readings.dError[row] = Math.hypot((error.re[a] ?? 0) - (error.re[b] ?? 0), (error.im[a] ?? 0) - (error.im[b] ?? 0));
-      const cancelled = Number.EPSILON * (sizeAt(x, a) + sizeAt(x, b));
-      readings.iError[row] = Math.hypot(yRe, yIm) * ((readings.dError[row] ?? 0) + cancelled);
     }
     for (const row of [...system.treeVoltages, ...system.equations]) {
       const at = layout.ofRow.get(row) ?? -1;
       readings.iRe[row] = x.re[at] ?? 0;
       readings.iIm[row] = x.im[at] ?? 0;
-      readings.iError[row] = sizeAt(error, at);
-      readings.readDifference(first, second, row);
       if (branches.form[row] !== GIVEN_VOLTAGE) continue;
       readings.dRe[row] = branches.sRe[row] ?? 0;
       readings.dIm[row] = branches.sIm[row] ?? 0;
-      readings.dError[row] = 0;
     }
+    this.estimateErrors(branches, readings);
     for (const row of system.currents) {
       if (layout.ofNode.has(first[row] ?? 0) && layout.ofNode.has(second[row] ?? 0)) {
         readings.readDifference(first, second, row);
+        this.readVoltage(row, readings);
       }
     }
   }
 
+  private readVoltage(row: number, readings: Readings): void {
+    const [a, b] = this.ends(row);
+    readings.dRe[row] = a === b ? 0 : this.x.differenceRe(a, b);
+    readings.dIm[row] = a === b ? 0 : this.x.differenceIm(a, b);
+  }
+
   /**
-   * A solution whose right-hand side is the rounding error of every line's terms at the solution in `x`, each with a
-   * phase of its own: what the errors of values and arithmetic do to each unknown.
+   * What the rounding of the values does to each unknown: a solution whose sources are that part of every element's
+   * voltage and of every term of an equation, each with a phase of its own.
    */
-  private strewnRounding(): ComplexVector {
-    const { matrix, x, b, lu, work } = this;
-    const { row, column } = matrix;
-    work.re.fill(0);
-    work.im.fill(0);
-    for (let at = 0; at < row.length; at++) {
-      const line = row[at] ?? 0;
-      const size = Number.EPSILON * Math.hypot(matrix.re[at] ?? 0, matrix.im[at] ?? 0) * sizeAt(x, column[at] ?? 0);
-      work.re[line] = (work.re[line] ?? 0) + size * Math.cos(GOLDEN_ANGLE * at);
-      work.im[line] = (work.im[line] ?? 0) + size * Math.sin(GOLDEN_ANGLE * at);
+  private estimateErrors(branches: BranchTable, readings: Readings): void {
+    const { b, work, system, layout, lu } = this;
+    b.re.fill(0);
+    b.im.fill(0);
+    const strew = (line: number, size: number, angle: number): void =>
+      this.inject(line, size * Math.cos(angle), size * Math.sin(angle));
+    const part = SAFETY * Number.EPSILON;
+    for (const row of system.admittances) {
+      const [from, to] = this.ends(row);
+      const size = part * Math.hypot(readings.iRe[row] ?? 0, readings.iIm[row] ?? 0);
+      if (from === to) continue;
+      strew(from, -size, GOLDEN_ANGLE * row);
+      strew(to, size, GOLDEN_ANGLE * row);
     }
-    for (let line = 0; line < this.size; line++) {
-      const size = Number.EPSILON * sizeAt(b, line);
-      work.re[line] = SAFETY * ((work.re[line] ?? 0) + size);
-      work.im[line] = SAFETY * (work.im[line] ?? 0);
+    for (const row of system.treeVoltages) {
+      const size = part * Math.hypot(branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
+      strew(layout.ofRow.get(row) ?? -1, size, GOLDEN_ANGLE * row);
     }
-    lu.solve(work.re, work.im, work.re, work.im);
-    return work;
+    for (const row of system.currents) {
+      const [from, to] = this.ends(row);
+      const size = part * Math.hypot(branches.sRe[row] ?? 0, branches.sIm[row] ?? 0);
+      strew(from, -size, GOLDEN_ANGLE * row);
+      strew(to, size, GOLDEN_ANGLE * row);
+    }
+    for (const row of system.equations) {
+      const equation = branches.equations[row];
+      for (const [place, of] of (equation?.row ?? []).entries()) {
+        const isVoltage = equation?.ofVoltage[place] === 1;
+        const re = (isVoltage ? readings.dRe[of] : readings.iRe[of]) ?? 0;
+        const im = (isVoltage ? readings.dIm[of] : readings.iIm[of]) ?? 0;
+        const size = part * Math.hypot(equation?.re[place] ?? 0, equation?.im[place] ?? 0) * Math.hypot(re, im);
+        strew(layout.ofRow.get(row) ?? -1, size, GOLDEN_ANGLE * (row + place + 1));
+      }
+    }
+    lu.solve(b.re, b.im, work.re, work.im);
+    for (const [node, at] of layout.ofNode) readings.vError[node] = at < 0 ? 0 : sizeAt(work, at);
+    for (const row of system.admittances) {
+      const [from, to] = this.ends(row);
+      const re = (work.re[from] ?? 0) - (work.re[to] ?? 0);
+      const im = (work.im[from] ?? 0) - (work.im[to] ?? 0);
+      readings.dError[row] = Math.hypot(re, im);
+      const own = part * Math.hypot(readings.iRe[row] ?? 0, readings.iIm[row] ?? 0);
+      readings.iError[row] = Math.hypot(branches.yRe[row] ?? 0, branches.yIm[row] ?? 0) * Math.hypot(re, im) + own;
+    }
+    for (const row of [...system.treeVoltages, ...system.equations]) {
+      readings.iError[row] = sizeAt(work, layout.ofRow.get(row) ?? -1);
+    }
   }
 
   /** The places of a row's nodes; −1 for a pinned one, and for one outside. */

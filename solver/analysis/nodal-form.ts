@@ -3,8 +3,8 @@ import { planElimination } from '../linear/elimination-plan';
 import { StarMesh } from '../linear/star-mesh';
 import { pathVoltage } from './given-voltages';
 import type { Network } from './network';
-import { REFERENCE } from './network';
-import { polishCurrents } from './polish-currents';
+import { polishCurrents, rowsAround } from './polish-currents';
+import { polishVoltages } from './polish-voltages';
 import type { Readings } from './readings';
 import type { Component, Structure } from './structure';
 
@@ -38,6 +38,10 @@ export class NodalForm {
   private mesh: StarMesh;
   private readonly others = new Map<string, StarMesh>();
   private readonly scratch = { re: 0, im: 0 };
+  /** Nodes that no given voltage touches. */
+  private readonly freeNodes: readonly number[];
+  /** Nodes whose voltage over the root is given. */
+  private readonly heldNodes: ReadonlySet<number>;
 
   constructor(
     private readonly network: Network,
@@ -46,6 +50,16 @@ export class NodalForm {
   ) {
     this.usual = new StarMesh(component.plan);
     this.mesh = this.usual;
+    const given = new Set<number>([component.nodes[0] ?? 0]);
+    for (const node of component.nodes) {
+      const parent = structure.parent[node] ?? -1;
+      if (parent >= 0) given.add(node).add(parent);
+    }
+    this.freeNodes = component.nodes.filter((node) => !given.has(node));
+    const { group } = component.graph;
+    this.heldNodes = new Set(
+      component.nodes.filter((node) => group[structure.vertexOf[node] ?? 0] === group[component.graph.root]),
+    );
   }
 
   /**
@@ -97,10 +111,12 @@ export class NodalForm {
     for (const row of component.admittances) {
       largest = Math.max(largest, Math.abs(readings.dRe[row] ?? 0) + Math.abs(readings.dIm[row] ?? 0));
     }
-    for (const node of component.nodes) readings.vError[node] = node === REFERENCE ? 0 : relative * largest;
+    for (const node of component.nodes) {
+      readings.vError[node] = this.heldNodes.has(node) ? 0 : (readings.vError[node] ?? 0) + relative * largest;
+    }
     for (const row of component.admittances) {
       const i = Math.abs(readings.iRe[row] ?? 0) + Math.abs(readings.iIm[row] ?? 0);
-      readings.dError[row] = relative * largest;
+      readings.dError[row] = (readings.dError[row] ?? 0) + relative * largest;
       readings.iError[row] = (readings.iError[row] ?? 0) + relative * i;
     }
   }
@@ -158,7 +174,17 @@ export class NodalForm {
       const i = Math.abs(readings.iRe[row] ?? 0) + Math.abs(readings.iIm[row] ?? 0);
       errors.set(row, slot < 0 ? 0 : y * (slotErrors[slot] ?? 0) + Number.EPSILON * i);
     }
-    polishCurrents(this.network, this.structure, component, branches, readings, errors);
+    const rows = [...component.admittances, ...component.innerCurrents, ...component.outerCurrents];
+    polishCurrents(this.network, rowsAround(this.network, this.freeNodes, rows), branches, readings, errors);
+    for (const row of component.admittances) {
+      const z = Math.abs(branches.zRe[row] ?? 0) + Math.abs(branches.zIm[row] ?? 0);
+      const d = Math.abs(readings.dRe[row] ?? 0) + Math.abs(readings.dIm[row] ?? 0);
+      readings.dError[row] = z * (readings.iError[row] ?? 0) + Number.EPSILON * d;
+    }
+    for (const node of component.nodes) {
+      readings.vError[node] = this.mesh.vertexError[this.structure.vertexOf[node] ?? 0] ?? 0;
+    }
+    polishVoltages(this.network, component.admittances, this.heldNodes, readings);
   }
 
   /**

@@ -1,7 +1,7 @@
 import type { BranchTable } from '../elements/branch-table';
+import { ADMITTANCE } from '../elements/branch-table';
 import type { Network } from './network';
 import type { Readings } from './readings';
-import type { Component, Structure } from './structure';
 
 /** Improvements feed on each other along a chain of nodes; after so many rounds what is left is not worth more. */
 const MOST_ROUNDS = 8;
@@ -14,19 +14,19 @@ const WORTHWHILE = 4;
  * large voltage may have lost digits, and its current with it; if the other currents at one of its nodes are better
  * known, Kirchhoff's current law gives it from them.
  *
- * `errorOf` gives each admittance's current a bound on its error; only the bounds decide, so a current is never
- * replaced by a worse one; the bounds that are left are noted in the readings. Nodes with a given voltage are passed over: a current there is itself found by the law.
+ * @param around the rows at each node whose current law may be used. Nodes with a given voltage are not among them
+ *   where the current there is itself found by the law.
+ * @param errorOf a bound on the error of each current that is not given; only the bounds decide, so a current is never
+ *   replaced by a worse one. Only those of admittances are replaced; the bounds that are left are noted in the readings.
  */
 export function polishCurrents(
   network: Network,
-  structure: Structure,
-  component: Component,
+  around: ReadonlyMap<number, readonly number[]>,
   branches: BranchTable,
   readings: Readings,
   errorOf: ReadonlyMap<number, number>,
 ): void {
   const errors = new Map(errorOf);
-  const around = rowsAround(network, structure, component);
   for (let round = 0; round < MOST_ROUNDS; round++) {
     let changed = false;
     for (const [node, rows] of around) {
@@ -37,25 +37,20 @@ export function polishCurrents(
   for (const [row, error] of errors) readings.iError[row] = error;
 }
 
-/** The rows at each node of the component that no given voltage touches; both ends on one node do not count. */
-function rowsAround({ first, second }: Network, structure: Structure, component: Component): Map<number, number[]> {
-  const given = new Set<number>([component.nodes[0] ?? 0]);
-  for (const node of component.nodes) {
-    const parent = structure.parent[node] ?? -1;
-    if (parent < 0) continue;
-    given.add(node);
-    given.add(parent);
-  }
+/** The rows at each of the nodes; both ends on one node do not count. */
+export function rowsAround(
+  { first, second }: Network,
+  nodes: Iterable<number>,
+  rows: Iterable<number>,
+): ReadonlyMap<number, readonly number[]> {
   const around = new Map<number, number[]>();
-  for (const node of component.nodes) if (!given.has(node)) around.set(node, []);
-  for (const rows of [component.admittances, component.innerCurrents, component.outerCurrents]) {
-    for (const row of rows) {
-      const a = first[row] ?? 0;
-      const b = second[row] ?? 0;
-      if (a === b) continue;
-      around.get(a)?.push(row);
-      around.get(b)?.push(row);
-    }
+  for (const node of nodes) around.set(node, []);
+  for (const row of rows) {
+    const a = first[row] ?? 0;
+    const b = second[row] ?? 0;
+    if (a === b) continue;
+    around.get(a)?.push(row);
+    around.get(b)?.push(row);
   }
   return around;
 }
@@ -75,7 +70,7 @@ function improveAt(
   for (const row of rows) {
     const error = errors.get(row) ?? 0;
     total += error;
-    if (error > worstError) {
+    if (error > worstError && branches.form[row] === ADMITTANCE) {
       worst = row;
       worstError = error;
     }

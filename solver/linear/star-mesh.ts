@@ -39,6 +39,8 @@ export class StarMesh {
   readonly eIm: Float64Array;
   /** The vertex of the weakest pivot that `factor` met; −1 where there was none to take. */
   weakest = -1;
+  /** How far off each vertex's voltage may be, V; found by `boundErrors`. */
+  readonly vertexError: Float64Array;
   private readonly error: Float64Array;
   private readonly wRe: Float64Array;
   private readonly wIm: Float64Array;
@@ -53,7 +55,7 @@ export class StarMesh {
     const neighbours = plan.neighbour.length;
     [this.yRe, this.yIm, this.jRe, this.jIm] = fourOf(slots);
     [this.dRe, this.dIm, this.error] = fourOf(slots);
-    [this.vRe, this.vIm] = fourOf(plan.vertexCount);
+    [this.vRe, this.vIm, this.vertexError] = fourOf(plan.vertexCount);
     [this.eRe, this.eIm, this.uRe, this.uIm] = fourOf(steps);
     [this.wRe, this.wIm] = fourOf(neighbours);
     [this.inverseRe, this.inverseIm] = fourOf(steps);
@@ -109,17 +111,20 @@ export class StarMesh {
 
   /**
    * How far off each slot's voltage may be by the rounding of `solve`, V: the same recurrences on sizes. A small
-   * voltage between vertices that large ones surround may have come out of cancellation, and this tells.
+   * voltage between vertices that large ones surround may have come out of cancellation, and this tells. Finds those of
+   * the vertices, in `vertexError`, on the way.
    */
   boundErrors(): Float64Array {
     const { plan, dRe, dIm, wRe, wIm, error } = this;
     const { neighbourSlot, target } = plan;
     error.fill(0);
+    this.vertexError.fill(0);
     for (const slot of plan.knownSlots) error[slot] = Number.EPSILON * sizeAt(dRe, dIm, slot);
     for (let step = plan.stepVertex.length - 1; step >= 0; step--) {
       const start = plan.neighbourStart[step] ?? 0;
       const end = plan.neighbourStart[step + 1] ?? 0;
       let pair = plan.targetStart[step] ?? 0;
+      this.boundVertexError(step);
       if ((plan.stepInto[step] ?? -1) >= 0) {
         const given = sizeAt(this.eRe, this.eIm, step);
         for (let at = start; at < end; at++, pair++) {
@@ -143,6 +148,21 @@ export class StarMesh {
       }
     }
     return error;
+  }
+
+  private boundVertexError(step: number): void {
+    const { plan, vRe, vIm, wRe, wIm, vertexError } = this;
+    const into = plan.stepInto[step] ?? -1;
+    let error = ROUNDING * sizeAt(this.uRe, this.uIm, step);
+    if (into >= 0) {
+      error = (vertexError[into] ?? 0) + Number.EPSILON * (sizeAt(vRe, vIm, into) + sizeAt(this.eRe, this.eIm, step));
+    } else {
+      for (let at = plan.neighbourStart[step] ?? 0; at < (plan.neighbourStart[step + 1] ?? 0); at++) {
+        const other = plan.neighbour[at] ?? 0;
+        error += sizeAt(wRe, wIm, at) * ((vertexError[other] ?? 0) + ROUNDING * sizeAt(vRe, vIm, other));
+      }
+    }
+    vertexError[plan.stepVertex[step] ?? 0] = error;
   }
 
   /** Answers the size of the pivot against the sum of the sizes of its terms. */

@@ -1,3 +1,4 @@
+import { Complex } from 'complex.js';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Element } from '@/solver';
@@ -231,6 +232,30 @@ describe('small things between large ones', () => {
     expectClose(solution.voltage('2'), { re: 10 / 22, im: -100 / 22 }, 4);
     expectClose(solution.voltage('3'), { re: 10 / 22, im: 5 - 100 / 22 }, 16);
     expect(solution.elementVoltage('V2')).toMatchObject({ re: 0, im: 5 });
+  });
+});
+
+describe('a chain whose reactances cancel in pairs', () => {
+  // Found by the random networks of properties.test.ts: node 4 came out of a difference of products of 10¹⁰.
+  it('has the voltages of its inner nodes to rounding', () => {
+    const omega = 2 * Math.PI * 1000;
+    const list = network(
+      voltageSource('V1', '1', '0', 1),
+      resistor('R1', '1', '2', 0.5),
+      resistor('R2', '2', '0', 1),
+      capacitor('C1', '3', '2', 1 / omega),
+      inductor('L1', '4', '3', 1 / omega),
+      capacitor('C2', '4', '1', (1 + 2e-10) / omega),
+    );
+    const solution = solved(solve(list, { frequency: 1000 }));
+    // The inductor and the first capacitor cancel, so nodes 4 and 2 are at one voltage: v₂·(3 + 1/jX) = 2 + 1/jX.
+    const x = -1 / (1 + 2e-10);
+    const v2 = new Complex(2, -1 / x).div(new Complex(3, -1 / x));
+    const i = new Complex(1).sub(v2).div(new Complex(0, x));
+    expectClose(solution.voltage('2'), v2, 8);
+    expectClose(solution.voltage('4'), v2, 8);
+    expectClose(solution.voltage('3'), v2.sub(i.mul(new Complex(0, 1))), 16);
+    expect(solution.residual).toBeLessThanOrEqual(1e-14);
   });
 });
 
