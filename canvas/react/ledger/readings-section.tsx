@@ -92,7 +92,7 @@ type LinesProps = {
   readonly onOrder: (order: ReadingOrder) => void;
 };
 
-/** The largest sheet whose lines are set within the frame of an edit; past it they follow when there is time. */
+/** The largest sheet whose lines in sight are set within the frame of an edit; past it all follow when there is time. */
 const MOST_AT_ONCE = 120;
 
 function Lines({ quantity, filter, order, onOrder }: LinesProps) {

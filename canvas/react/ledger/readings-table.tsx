@@ -1,7 +1,7 @@
 'use client';
 
 import { ArrowDown, ArrowUp } from 'lucide-react';
-import { memo, useCallback, useState, type KeyboardEvent } from 'react';
+import { memo, useCallback, useDeferredValue, useMemo, useRef, useState, type KeyboardEvent } from 'react';
 import { classNames } from '@/components/class-names';
 import type { ReadingConvention } from '../../network/format-reading';
 import type { ReadingOrder, ReadingQuantity } from '../../network/reading-rows';
@@ -11,6 +11,7 @@ import { useSheetStore } from '../sheet-context';
 import { figureTones, type FigureTone } from './figure-line';
 import type { ReadingLine } from './reading-lines';
 import { showOnDrawing } from './show-on-drawing';
+import { useRowsInSight } from './use-rows-in-sight';
 
 const TONES: Readonly<Record<ReadingQuantity, FigureTone>> = {
   current: 'current',
@@ -46,6 +47,13 @@ export function ReadingsTable({ lines, quantity, convention, order, onOrder, sel
   const [active, setActive] = useState<string | null>(null);
   const tabbable = lines.some(({ id }) => id === active) ? active : lines[0]?.id;
 
+  // What is in sight changes within the frame of an edit; the other rows follow when there is time.
+  const body = useRef<HTMLTableSectionElement>(null);
+  const { from, to } = useRowsInSight(body, ROW_HEIGHT_PX);
+  const later = useDeferredValue(lines);
+  const laterById = useMemo(() => new Map(later.map((line) => [line.id, line])), [later]);
+  const shown = lines.map((line, place) => (place >= from && place < to ? line : (laterById.get(line.id) ?? line)));
+
   const onPress = useCallback(
     (id: string) => {
       if (quantity !== 'node') return showOnDrawing(commands.context(), { parts: [id] });
@@ -61,8 +69,8 @@ export function ReadingsTable({ lines, quantity, convention, order, onOrder, sel
       <thead role="rowgroup" className="block border-b border-rule">
         <HeadRow quantity={quantity} convention={convention} order={order} onOrder={onOrder} />
       </thead>
-      <tbody role="rowgroup" className="block" onKeyDown={moveFocus}>
-        {lines.map((line) => (
+      <tbody ref={body} role="rowgroup" className="block" onKeyDown={moveFocus}>
+        {shown.map((line) => (
           <Row
             key={line.id}
             id={line.id}
@@ -100,6 +108,9 @@ function moveFocus(event: KeyboardEvent<HTMLElement>) {
   const target = { previous: Math.max(0, at - 1), next: Math.min(buttons.length - 1, at + 1), first: 0, last: buttons.length - 1 }[step];
   buttons[target]?.focus();
 }
+
+/** As the rows' class has it. */
+const ROW_HEIGHT_PX = 26;
 
 /** Columns: the name takes what is left; figures have their places, whatever they are. */
 const TWO_FIGURES = 'grid grid-cols-[minmax(0,1fr)_86px_86px] items-center';
