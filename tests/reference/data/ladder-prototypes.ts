@@ -81,22 +81,64 @@ export const CHEBYSHEV: Readonly<Record<string, Readonly<Record<number, PrintedL
   },
 };
 
-/** By ripple in decibels, then by order. */
-export const PRINTED_CHEBYSHEV: Readonly<Record<string, Readonly<Record<number, PrintedLadder>>>> = {
+/** By ripple in decibels, then by order: on an ideal voltage source, loaded with 1 Ω, a series inductor first. */
+export const CHEBYSHEV_SINGLE: Readonly<Record<string, Readonly<Record<number, readonly number[]>>>> = {
+  '0.1': {
+    3: [1.089479, 1.086399, 0.51578],
+    5: [1.375895, 1.592373, 1.556225, 1.249014, 0.573407],
+    7: [1.474495, 1.739464, 1.798715, 1.710668, 1.623558, 1.290782, 0.590589],
+  },
+  '0.5': {
+    3: [1.346486, 1.300145, 0.79814],
+    5: [1.53875, 1.642623, 1.814175, 1.429081, 0.852885],
+    7: [1.598332, 1.725249, 1.971328, 1.736914, 1.867681, 1.459458, 0.868646],
+  },
+  '1.0': {
+    3: [1.508848, 1.333242, 1.011796],
+    5: [1.665239, 1.590755, 1.993771, 1.444137, 1.067441],
+    7: [1.711963, 1.648751, 2.119386, 1.673497, 2.043841, 1.469249, 1.083279],
+  },
+  '3.0': {
+    3: [2.030218, 1.173911, 1.674368],
+    5: [2.14889, 1.301588, 2.622446, 1.250215, 1.740644],
+    7: [2.182842, 1.328134, 2.714281, 1.361286, 2.675223, 1.266455, 1.759262],
+  },
+};
+
+/** By ripple in decibels, then by order; where a row is off by more than its last digit, `within` says how far. */
+export const PRINTED_CHEBYSHEV: Readonly<
+  Record<string, Readonly<Record<number, PrintedLadder & { readonly within?: number }>>>
+> = {
   '0.5': {
     3: { g: [1.5963, 1.0967, 1.5963], load: 1.0 },
     4: { g: [1.6703, 1.1926, 2.3661, 0.8419], load: 1.9841 },
     5: { g: [1.7058, 1.2296, 2.5408, 1.2296, 1.7058], load: 1.0 },
-    7: { g: [1.7372, 1.2583, 2.6381, 1.3444, 2.6381, 1.2583, 1.7372], load: 1.0 },
+    7: { g: [1.7372, 1.2583, 2.6381, 1.3444, 2.6381, 1.2583, 1.7372], load: 1.0, within: 1e-3 },
   },
   '3': {
     3: { g: [3.3487, 0.7117, 3.3487], load: 1.0 },
-    5: { g: [3.4817, 0.7618, 4.5381, 0.7618, 3.4817], load: 1.0 },
-    7: { g: [3.5182, 0.7723, 4.6386, 0.8039, 4.6386, 0.7723, 3.5182], load: 1.0 },
+    5: { g: [3.4817, 0.7618, 4.5381, 0.7618, 3.4817], load: 1.0, within: 1e-3 },
+    7: { g: [3.5182, 0.7723, 4.6386, 0.8039, 4.6386, 0.7723, 3.5182], load: 1.0, within: 1e-3 },
   },
   '0.1': {
     3: { g: [1.0316, 1.1474, 1.0316], load: 1.0 },
     5: { g: [1.1468, 1.3712, 1.975, 1.3712, 1.1468], load: 1.0 },
     7: { g: [1.1812, 1.4228, 2.0967, 1.5734, 2.0967, 1.4228, 1.1812], load: 1.0 },
   },
+};
+
+/** The load of 3 dB and even order as those tables print it; the closed form gives 5.8089. */
+export const PRINTED_EVEN_LOAD = { ripple: 3, load: 5.8095, within: 1e-3 } as const;
+
+/** The quality of each stage of a Butterworth filter in second-order stages, by order [memory, confirmed by calculation]. */
+export const BUTTERWORTH_QUALITIES: Readonly<Record<number, readonly number[]>> = {
+  2: [0.7071],
+  3: [1.0],
+  4: [0.5412, 1.3066],
+  5: [0.618, 1.618],
+  6: [0.5176, 0.7071, 1.9319],
+  7: [0.555, 0.8019, 2.247],
+  8: [0.5098, 0.6013, 0.9, 2.5629],
+  9: [0.5321, 0.6527, 1.0, 2.8794],
+  10: [0.5062, 0.5612, 0.7071, 1.1013, 3.1962],
 };
