@@ -28,13 +28,13 @@ export class ExtendedVector {
     for (const part of [this.re, this.im, this.reLow, this.imLow]) part.fill(0);
   }
 
-  /** Real part of one number less another's; −1 stands for nothing. */
-  differenceRe(one: number, other: number): number {
-    return difference(this.re, this.reLow, one, other);
+  /** Real part of one number less another's, less a double; −1 stands for nothing. */
+  differenceRe(one: number, other: number, less = 0): number {
+    return difference(this.re, this.reLow, one, other, less);
   }
 
   differenceIm(one: number, other: number): number {
-    return difference(this.im, this.imLow, one, other);
+    return difference(this.im, this.imLow, one, other, 0);
   }
 
   /** Adds a vector of plain doubles. */
@@ -46,15 +46,17 @@ export class ExtendedVector {
   }
 }
 
-function difference(high: Float64Array, low: Float64Array, one: number, other: number): number {
+function difference(high: Float64Array, low: Float64Array, one: number, other: number, less: number): number {
   const oneHigh = one < 0 ? 0 : (high[one] ?? 0);
   const oneLow = one < 0 ? 0 : (low[one] ?? 0);
   const otherHigh = other < 0 ? 0 : (high[other] ?? 0);
   const otherLow = other < 0 ? 0 : (low[other] ?? 0);
   const sum = oneHigh - otherHigh;
   const part = sum - oneHigh;
-  const lost = oneHigh - (sum - part) + (-otherHigh - part);
-  return sum + (lost + (oneLow - otherLow));
+  const lost = oneHigh - (sum - part) + (-otherHigh - part) + (oneLow - otherLow);
+  const rest = sum - less;
+  const restPart = rest - sum;
+  return rest + (sum - (rest - restPart) + (-less - restPart) + lost);
 }
 
 function addTo(high: Float64Array, low: Float64Array, at: number, value: number): void {
