@@ -2,8 +2,8 @@ import { describe, expect, it } from 'vitest';
 import type { ElementList, Problem } from '@/solver';
 import { ExtendedVector } from '@/solver/linear/extended';
 import { isProblem, ResponseOperator } from '@/solver/analysis/response-operator';
-import type { ExactOutput } from '../reference/support/exact-solver';
 import { solveExactly } from '../reference/support/exact-solver';
+import { unitsOff } from './support/exact-units';
 import { randomLinearNetwork } from './support/linear-networks';
 import { capacitor, currentSource, inductor, network, resistor, voltageSource } from './support/networks';
 import { Random } from './support/random';
@@ -34,12 +34,6 @@ function node(operator: ResponseOperator, name: string): number {
   const at = operator.nodeOf(name);
   if (isProblem(at)) throw new Error(at.message);
   return at;
-}
-
-/** The error in units of ε·(1 + condition); where 64 digits leave a remainder of nothing, nothing is expected. */
-function unitsOff(of: ExactOutput, value: { readonly re: number; readonly im: number }): number {
-  if (Math.hypot(of.re, of.im) > 1e-30) return of.errorOf(value) / (Number.EPSILON * (1 + of.condition));
-  return Math.hypot(value.re, value.im) < 1e-20 ? 0 : Infinity;
 }
 
 describe('ResponseOperator', () => {
