@@ -40,7 +40,8 @@ export type { SolveOptions } from './analysis/steady-state';
 export { solve } from './analysis/steady-state';
 export type { Superposition, SuperpositionOptions, Total } from './analysis/superposition';
 export { sourceFrequencies, superpose, valueAt } from './analysis/superposition';
-export type { Sweep, SweepOptions, SweepOutput, SweepProblem, SweepTrace } from './analysis/sweep';
+export type { Sweep, SweepOptions, SweepProblem, SweepTrace } from './analysis/sweep';
+export type { SweepOutput } from './analysis/sweep-output';
 export { sweep } from './analysis/sweep';
 
 export type { Unit } from './quantities/unit';

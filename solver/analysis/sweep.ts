@@ -1,15 +1,19 @@
 import type { ElementList } from '../elements/element-list';
+import type { Law } from '../elements/law';
 import { validateElementList } from '../elements/validate-element-list';
-import { Engine } from './engine';
+import { runOverFrequencies } from '../tape/lane-runner';
+import { shapeOf } from '../tape/network-inputs';
+import type { SweepTape } from '../tape/sweep-tape';
+import { compileSweep } from '../tape/sweep-tape';
+import { LEVEL } from '../tape/tape-builder';
+import type { Network } from './network';
+import { toNetwork } from './network';
 import type { Problem } from './problem';
 import { problem } from './problem';
 import { faultOfFrequency } from './steady-state';
-
-/** What is recorded at each frequency: the voltage of a node, or the current or voltage of an element. */
-export type SweepOutput =
-  | { readonly quantity: 'voltage'; readonly node: string }
-  | { readonly quantity: 'elementVoltage'; readonly element: string }
-  | { readonly quantity: 'current'; readonly element: string };
+import { ExactSweep } from './sweep-exact';
+import type { Output, SweepOutput } from './sweep-output';
+import { isProblem, resolveOutput } from './sweep-output';
 
 export interface SweepOptions {
   /** The operating frequencies, hertz, in any order. */
@@ -43,77 +47,122 @@ export interface Sweep {
  * The steady state at many frequencies, as `solve` gives it at each, with the network analysed once. A source with a
  * frequency of its own is dead at all others. A bare `Problem` where the request is faulty, or where nothing that was
  * asked for is determined at any frequency.
+ *
+ * Method: the elimination of the network's equations is compiled to a straight-line program and run over blocks of
+ * frequencies (see `compileSweep`); a frequency at which a pivot cancels, 0 Hz, and a network without a unique solution
+ * are done as `solve` does them. Cost: for what a person draws, far below a microsecond a frequency and unknown.
  */
 export function sweep(list: ElementList, options: SweepOptions): Sweep | Problem {
+  const prepared = prepareSweep(list, options.outputs);
+  return prepared.ok ? prepared.run(options.frequencies) : prepared;
+}
+
+/** A network analysed for outputs, to be run again and again. */
+export interface PreparedSweep {
+  readonly ok: true;
+  /**
+   * Runs over frequencies, hertz. With `list`, for other values of the same elements between the same nodes: nothing is
+   * analysed again unless a value comes to be zero or a source comes to be real.
+   */
+  run(frequencies: ArrayLike<number>, list?: ElementList): Sweep | Problem;
+}
+
+/** Analyses a network for outputs; a `Problem` where the request is faulty. */
+export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[]): PreparedSweep | Problem {
   const checked = validateElementList(list);
   if (!checked.ok) return problem('invalid', [], [], checked.message);
-  const frequencies = Float64Array.from(options.frequencies);
+  const network = toNetwork(checked.list);
+  const resolved: Output[] = [];
+  for (const output of outputs) {
+    const found = resolveOutput(network, output);
+    if (isProblem(found)) return found;
+    resolved.push(found);
+  }
+  let compiled = compile(network, resolved);
+  return {
+    ok: true,
+    run(frequencies, changed) {
+      let current = checked.list;
+      let { laws } = network;
+      if (changed !== undefined) {
+        const rechecked = validateElementList(changed);
+        if (!rechecked.ok) return problem('invalid', [], [], rechecked.message);
+        current = rechecked.list;
+        const other = toNetwork(current);
+        if (!isSameGraph(network, other)) {
+          return problem('invalid', [], [], 'The list has other elements or nodes than the one that was prepared; prepare it anew.');
+        }
+        ({ laws } = other);
+        if (shapeOf(laws) !== compiled.shape) compiled = compile(other, resolved);
+      }
+      return runPrepared(current, laws, compiled.tape, resolved, outputs, frequencies);
+    },
+  };
+}
+
+interface Compiled {
+  readonly shape: string;
+  readonly tape: SweepTape | undefined;
+}
+
+function compile(network: Network, outputs: readonly Output[]): Compiled {
+  return { shape: shapeOf(network.laws), tape: compileSweep(network, outputs, () => LEVEL.constant) };
+}
+
+function isSameGraph(one: Network, other: Network): boolean {
+  return (
+    one.rowCount === other.rowCount &&
+    one.elements.every(({ id, kind }, place) => other.elements[place]?.id === id && other.elements[place]?.kind === kind) &&
+    one.nodeNames.every((name, node) => other.nodeNames[node] === name) &&
+    one.first.every((node, row) => other.first[row] === node) &&
+    one.second.every((node, row) => other.second[row] === node)
+  );
+}
+
+function runPrepared(
+  list: ElementList,
+  laws: readonly Law[],
+  tape: SweepTape | undefined,
+  outputs: readonly Output[],
+  asked: readonly SweepOutput[],
+  given: ArrayLike<number>,
+): Sweep | Problem {
+  const frequencies = Float64Array.from(given);
   for (const frequency of frequencies) {
     const fault = faultOfFrequency(frequency);
     if (fault !== undefined) return problem('invalid', [], [], fault);
   }
-  const engine = new Engine(checked.list);
-  const channels: Channel[] = [];
-  for (const output of options.outputs) {
-    const channel = channelOf(engine, output, frequencies.length);
-    if ('ok' in channel) return channel;
-    channels.push(channel);
-  }
+  const count = frequencies.length;
+  const traces = asked.map((output): SweepTrace => ({
+    output,
+    re: new Float64Array(count),
+    im: new Float64Array(count),
+    determined: new Uint8Array(count).fill(1),
+  }));
+  const doubtful = new Uint8Array(count);
+  if (tape === undefined) doubtful.fill(1);
+  else runOverFrequencies(tape, laws, frequencies, traces, doubtful);
+
   const problems = new Map<string, { problem: Problem; at: number[] }>();
-  for (const [place, frequency] of frequencies.entries()) {
-    for (const found of engine.solveAt(frequency)) note(problems, found, place);
-    for (const channel of channels) record(channel, place);
+  if (doubtful.includes(1)) {
+    const exact = new ExactSweep(list);
+    for (const output of outputs) exact.prepare(output);
+    for (const [place, frequency] of frequencies.entries()) {
+      if (doubtful[place] !== 1) continue;
+      for (const found of exact.solveAt(frequency)) note(problems, found, place);
+      for (const [index, { re, im, determined }] of traces.entries()) {
+        const output = outputs[index];
+        const found = output === undefined ? undefined : exact.read(output);
+        re[place] = found?.re ?? 0;
+        im[place] = found?.im ?? 0;
+        determined[place] = found === undefined ? 0 : 1;
+      }
+    }
   }
   const [worst] = problems.values();
-  const determined = channels.some(({ trace }) => trace.determined.includes(1));
-  if (worst !== undefined && channels.length > 0 && !determined) return worst.problem;
-  return { ok: true, frequencies, traces: channels.map(({ trace }) => trace), problems: [...problems.values()] };
-}
-
-interface Channel {
-  readonly trace: SweepTrace;
-  /** The readings that it is taken from, and the place in them. */
-  readonly re: Float64Array;
-  readonly im: Float64Array;
-  readonly known: Uint8Array;
-  readonly at: number;
-}
-
-function channelOf({ network, readings }: Engine, output: SweepOutput, length: number): Channel | Problem {
-  const trace: SweepTrace = {
-    output,
-    re: new Float64Array(length),
-    im: new Float64Array(length),
-    determined: new Uint8Array(length),
-  };
-  switch (output.quantity) {
-    case 'voltage': {
-      const at = network.nodeIndex.get(output.node);
-      if (at === undefined) return problem('invalid', [], [], `There is no node ${output.node} in the element list.`);
-      return { trace, re: readings.vRe, im: readings.vIm, known: readings.vKnown, at };
-    }
-    case 'elementVoltage': {
-      const at = network.elementIndex.get(output.element);
-      if (at === undefined) return noElement(output.element);
-      return { trace, re: readings.dRe, im: readings.dIm, known: readings.dKnown, at };
-    }
-    case 'current': {
-      const at = network.elementIndex.get(output.element);
-      if (at === undefined) return noElement(output.element);
-      return { trace, re: readings.iRe, im: readings.iIm, known: readings.iKnown, at };
-    }
-  }
-}
-
-function noElement(id: string): Problem {
-  return problem('invalid', [], [], `There is no element ${id} in the element list.`);
-}
-
-function record({ trace, re, im, known, at }: Channel, place: number): void {
-  if (known[at] !== 1) return;
-  trace.re[place] = re[at] ?? 0;
-  trace.im[place] = im[at] ?? 0;
-  trace.determined[place] = 1;
+  const isDetermined = traces.some(({ determined }) => determined.includes(1));
+  if (worst !== undefined && traces.length > 0 && !isDetermined) return worst.problem;
+  return { ok: true, frequencies, traces, problems: [...problems.values()] };
 }
 
 /** The same problem at several frequencies is one, with its places; a resonance names its frequency and stays apart. */

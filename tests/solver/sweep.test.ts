@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Sweep, SweepOutput } from '@/solver';
 import { solve, sweep } from '@/solver';
-import { solved } from './support/expect';
+import { expectClose, solved } from './support/expect';
 import { capacitor, inductor, network, resistor, voltageSource } from './support/networks';
 
 const list = network(
@@ -25,19 +25,16 @@ function swept(frequencies: readonly number[], of: readonly SweepOutput[] = outp
 }
 
 describe('sweep', () => {
-  it('is what solve gives at each frequency, to the last bit, in any order and with repeats', () => {
+  it('is what solve gives at each frequency, to rounding, in any order and with repeats', () => {
     const frequencies = [1e3, 50, 0, 1e5, 50, 5032.9, 0.001];
     const result = swept(frequencies);
     expect([...result.frequencies]).toEqual(frequencies);
     for (const [place, frequency] of frequencies.entries()) {
       const one = solved(solve(list, { frequency }));
-      const [voltage, current, across] = result.traces;
-      expect([voltage?.re[place], voltage?.im[place]]).toEqual([one.voltage('3')?.re, one.voltage('3')?.im]);
-      expect([current?.re[place], current?.im[place]]).toEqual([one.current('L1')?.re, one.current('L1')?.im]);
-      expect([across?.re[place], across?.im[place]]).toEqual([
-        one.elementVoltage('R1')?.re,
-        one.elementVoltage('R1')?.im,
-      ]);
+      const [voltage, current, across] = result.traces.map(({ re, im }) => ({ re: re[place] ?? NaN, im: im[place] ?? NaN }));
+      expectClose(voltage, one.voltage('3') ?? { re: NaN, im: NaN }, 20);
+      expectClose(current, one.current('L1') ?? { re: NaN, im: NaN }, 20);
+      expectClose(across, one.elementVoltage('R1') ?? { re: NaN, im: NaN }, 20);
     }
   });
 

@@ -1,0 +1,28 @@
+/**
+ * Frequencies from the first to the last, both included exactly, evenly spaced.
+ *
+ * @param count at least 2; fewer give the first alone, or nothing
+ */
+export function linearFrequencies(firstHz: number, lastHz: number, count: number): Float64Array {
+  return grid(firstHz, lastHz, count, (part) => firstHz + part * (lastHz - firstHz));
+}
+
+/** Frequencies above zero from the first to the last, both included exactly, evenly spaced on a logarithmic scale. */
+export function logarithmicFrequencies(firstHz: number, lastHz: number, count: number): Float64Array {
+  const span = Math.log(lastHz / firstHz);
+  return grid(firstHz, lastHz, count, (part) => firstHz * Math.exp(part * span));
+}
+
+/** The frequencies of several lists, rising, each once. */
+export function listedFrequencies(...lists: readonly ArrayLike<number>[]): Float64Array {
+  const all = new Set(lists.flatMap((list) => Array.from(list)));
+  return Float64Array.from(all).sort();
+}
+
+function grid(firstHz: number, lastHz: number, count: number, at: (part: number) => number): Float64Array {
+  const frequencies = new Float64Array(Math.max(0, Math.floor(count)));
+  for (let place = 0; place < frequencies.length; place++) frequencies[place] = at(place / (frequencies.length - 1));
+  if (frequencies.length > 0) frequencies[0] = firstHz;
+  if (frequencies.length > 1) frequencies[frequencies.length - 1] = lastHz;
+  return frequencies;
+}
