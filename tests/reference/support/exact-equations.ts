@@ -46,8 +46,13 @@ export function equationsOf({ elements }: ElementList, frequency: number): Equat
   const branches: Branch[] = [];
   for (const element of elements) {
     const own = relationOf(element, frequency);
-    if (own === undefined) branches.push(...branchesOf(element, frequency));
-    else if ('y' in own && !sensed.has(element.id)) {
+    if (own === undefined) {
+      branches.push(...branchesOf(element, frequency));
+      // Nothing enters the inputs, which are the amplifier's first port.
+      if (element.kind === 'operationalAmplifier') {
+        given.push({ id: element.id, nodes: pairOf(element), current: ZERO });
+      }
+    } else if ('y' in own && !sensed.has(element.id)) {
       if (!isZero(own.y)) admittances.push({ id: element.id, nodes: pairOf(element), y: own.y });
       else given.push({ id: element.id, nodes: pairOf(element), current: ZERO });
     } else if ('current' in own && !sensed.has(element.id)) {
@@ -178,7 +183,7 @@ function branchesOf(element: Element, frequency: number): readonly Branch[] {
       const out: Pair = [output, '0'];
       const { openLoopGain, gainBandwidth, outputResistance = 0 } = element;
       if (openLoopGain === undefined && gainBandwidth === undefined) {
-        return [branch(0, out, [ofVoltage([plus, minus], ONE, false)])];
+        return [branch(1, out, [ofVoltage([plus, minus], ONE, false)])];
       }
       // v_out/A − R_out·i/A − (v_plus − v_minus) = 0, with 1/A = 1/A₀ + jω/(2π·f_T).
       const inverse = big(
@@ -186,10 +191,10 @@ function branchesOf(element: Element, frequency: number): readonly Branch[] {
         gainBandwidth === undefined ? ZERO.re : omega.div(PI.times(2).times(exact(gainBandwidth))),
       );
       return [
-        branch(0, out, [
+        branch(1, out, [
           ofVoltage([plus, minus], negative(ONE), false),
           ofVoltage(out, inverse),
-          ofCurrent(0, negative(mul(real(exact(outputResistance)), inverse))),
+          ofCurrent(1, negative(mul(real(exact(outputResistance)), inverse))),
         ]),
       ];
     }

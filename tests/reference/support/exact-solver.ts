@@ -125,7 +125,7 @@ export function solveExactly(list: ElementList, frequency: number): ExactSolutio
     current: (id, port = 0) => {
       const place = branchPlace.get(branchName(id, port));
       if (place !== undefined) return output(unit(place), ZERO);
-      const flow = given.find((one) => one.id === id);
+      const flow = port === 0 ? given.find((one) => one.id === id) : undefined;
       if (flow !== undefined) return output([], flow.current);
       const k = admittances.findIndex((one) => one.id === id);
       const own = admittances[k];
