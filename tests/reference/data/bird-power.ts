@@ -47,7 +47,8 @@ export const POWER_TRANSFER: readonly Circuit[] = [
       reading('re', { of: 'impedance', node: 'out' }, 1000, '71.696'),
       reading('im', { of: 'impedance', node: 'out' }, 1000, '-45.048'),
       best('resistances', 1000, ['84.67', NONE], '127.9'),
-      best('resistances', 1000, ['84.67', NONE], '127.902', 'computed'),
+      // From the impedance to three decimals.
+      { ...best('resistances', 1000, ['84.67', NONE], '127.902', 'computed'), within: 0.001 },
     ],
   ),
   transfer('4', behind(60, 4, 3), [best('resistances', 50, ['5.0', NONE], '200.0')]),

@@ -84,6 +84,16 @@ export const INTERFERENCE_STARTERS: readonly Circuit[] = [
       level(insertion(50, 50), 150e3, '73.28'),
       level(insertion(0.1, 100), 150e3, '52.39'),
       leastDecibels(insertion(0.1, 100), [5e3, 9e3], '6.94e3', '-6.86'),
+      leastDecibels(insertion(100, 0.1), [5e3, 9e3], '6.94e3', '-6.86'),
+      // Between equal resistances nothing passive amplifies: the least loss is that of 0.15 Ω, 20 lg 1.0015.
+      {
+        kind: 'smallest',
+        mark: 'corrected',
+        read: 'decibels',
+        output: insertion(50, 50),
+        between: [10, 1e6],
+        value: shown('0.0130'),
+      },
     ],
   },
   {

@@ -210,7 +210,9 @@ export const LOUDSPEAKER_STARTERS: readonly Circuit[] = [
     ),
   ]),
   compensated('ST-24', 'standard values', 5.6, 0.82e-3, 39e-6, [
-    extreme('largest', ohms('s'), [100, 10e3], undefined, '3.47'),
+    // From 200 Hz to 5 kHz; beyond, it goes to the 3.4 Ω of R_e.
+    extreme('smallest', ohms('s'), [200, 5e3], undefined, '3.405'),
+    extreme('largest', ohms('s'), [200, 5e3], undefined, '3.47'),
   ]),
   {
     id: 'ST-25',

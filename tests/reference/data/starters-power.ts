@@ -64,7 +64,6 @@ export const POWER_STARTERS: readonly Circuit[] = [
     ],
     figures: [
       { kind: 'value', element: 'L1', printed: '1.53e-3' },
-      { kind: 'value', element: 'C1', printed: '462e-6' },
       size(amperes('C1'), 50, '36.08'),
       // From line to line.
       reading('magnitude', 'x', 50, '430.1', 1 / Math.sqrt(3)),

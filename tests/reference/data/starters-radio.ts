@@ -2,7 +2,7 @@ import type { Element } from '@/solver';
 import { capacitor, inductor, resistor, voltageSource } from '../../solver/support/networks';
 import { amperes, crossing, level, phase, reading, size, volts, watts } from '../support/figures';
 import { fixedImpedance } from '../support/parts';
-import type { Circuit, ExactFigure, Figure, Output, ValueFigure } from '../support/records';
+import type { Circuit, ExactFigure, Figure, Output, Printed, ScatteringFigure, ValueFigure } from '../support/records';
 
 /**
  * Starter networks of the library: matching up to VHF. The values are the project's own; each figure was computed with
@@ -44,6 +44,18 @@ function match({ from, elements, ...circuit }: Match): Circuit {
 /** The voltage of a load when it takes all that a source of 2 V EMF can give: `level` against it is the gain. */
 function all(from: number, load: number): number {
   return Math.sqrt(load / from);
+}
+
+function scattering(parameter: ScatteringFigure['parameter'], re: string, im: string): ScatteringFigure {
+  return {
+    kind: 'scattering',
+    ports: ['a', 'b'],
+    reference: 50,
+    frequency: 1e6,
+    parameter,
+    re: { printed: re },
+    im: { printed: im },
+  };
 }
 
 function lMatch(c: number, l: number): readonly Element[] {
@@ -212,14 +224,14 @@ function resonator(resistance: number): readonly Element[] {
   return [capacitor('Cm', 'n', 'x', 12e-15), inductor('Lm', 'x', 'y', L43), resistor('Rm', 'y', '0', resistance)];
 }
 /** The reactive current of a source through these is nothing at parallel resonance. */
-function parallelResonance(title: string, extra: readonly Element[], printed: string): Circuit {
+function parallelResonance(title: string, extra: readonly Element[], at: Printed): Circuit {
   return {
     id: `ST-43 ${title}`,
     title: `quartz resonator, 6 MHz, ${title}`,
     source: 'f_p = f_s√(1 + C₁/C₀)',
     mark: 'computed',
     elements: [voltageSource('V1', 'n', '0', 1), ...resonator(0), capacitor('C0', 'n', '0', 3.2e-12), ...extra],
-    figures: [crossing('im', amperes('V1'), 0, [SERIES_43 * 1.00001, SERIES_43 * 1.005], printed)],
+    figures: [{ ...crossing('im', amperes('V1'), 0, [SERIES_43 * 1.00001, SERIES_43 * 1.005], at.printed), ...at }],
   };
 }
 
@@ -255,7 +267,22 @@ export const RESONANT_RADIO_STARTERS: readonly Circuit[] = [
       { kind: 'resonance', output: amperes('Rm'), source: 'V1', quality: { printed: '100477' } },
     ],
   },
-  parallelResonance('parallel resonance', [], '6.011239e6'),
-  // 283 ppm above 6 MHz.
-  parallelResonance('with 18 pF', [capacitor('CL', 'n', '0', 18e-12)], '6.001698e6'),
+  parallelResonance('parallel resonance', [], { printed: '6.011239e6' }),
+  // 283 parts in a million above 6 MHz, to half a part.
+  parallelResonance('with 18 pF', [capacitor('CL', 'n', '0', 18e-12)], { printed: '6.001698e6', within: 3 }),
 ];
+
+/** A two-port that has no impedance matrix. */
+export const SERIES_ARM: Circuit = {
+  id: 'series arm',
+  title: 'a two-port of 50 + j25 Ω in series, in 50 Ω',
+  source: 'S11 = Z/(Z + 2R), S21 = 2R/(Z + 2R)',
+  mark: 'computed',
+  elements: [fixedImpedance('Z1', 'a', 'b', 50, 25, 1e6)],
+  figures: [
+    scattering('s11', '0.351351', '0.108108'),
+    scattering('s21', '0.648649', '-0.108108'),
+    scattering('s12', '0.648649', '-0.108108'),
+    scattering('s22', '0.351351', '0.108108'),
+  ],
+};
