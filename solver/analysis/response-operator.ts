@@ -66,6 +66,13 @@ export class ResponseOperator {
     return this.now().layout;
   }
 
+  /** The equations at that frequency, also where they have no unique solution. */
+  get layoutAt(): ResponseLayout {
+    const { prepared } = this.frequency === 0 ? this.direct : this.alternating;
+    if (prepared === undefined) throw new Error('no frequency is prepared');
+    return prepared.layout;
+  }
+
   /** rad/s. */
   get omega(): number {
     return 2 * Math.PI * this.frequency;
