@@ -1,7 +1,7 @@
 import type { PencilMatrices } from './pencil-matrices';
 import { PlaneRotation } from './plane-rotation';
 import type { Spectrum } from './spectrum';
-import { NO_CONVERGENCE_AFTER } from './spectrum';
+import { ASIDE_EVERY, NO_CONVERGENCE_AFTER } from './spectrum';
 
 /**
  * The eigenvalues of a complex pencil A − λB, A upper Hessenberg, B upper triangular and of full rank: the QZ iteration
@@ -96,7 +96,7 @@ function shiftOf(
   const m34 = over(...minus(a(e + 1), times(m33, b(e + 1))), ...b(e + size + 1));
   const m44 = over(...minus(a(e + size + 1), times(m43, b(e + 1))), ...b(e + size + 1));
   // A step to the side now and then, for a block that goes in circles.
-  if (step % 10 === 0) return [(m44[0] ?? 0) + Math.hypot(...m43), m44[1] ?? 0];
+  if (step % ASIDE_EVERY === 0) return [(m44[0] ?? 0) + Math.hypot(...m43), m44[1] ?? 0];
   const half = minus(m33, m44).map((part) => part / 2) as [number, number];
   const product = times(m34, m43);
   const square = times(half, half);

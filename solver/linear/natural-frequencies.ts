@@ -1,30 +1,16 @@
+import { blockTriangular } from './block-triangular';
+import type { NaturalFrequency, Refined, Root } from './coincident-roots';
+import { gather } from './coincident-roots';
 import { ComplexLu } from './complex-lu';
 import { generalisedEigenvalues } from './generalised-eigenvalues';
 import type { PencilMatrices } from './pencil-matrices';
 import { balance, copyOfPencil } from './pencil-matrices';
 import type { Stamps } from './stamps';
 
-/** One s at which det(G + s·C) is zero. */
-export interface NaturalFrequency {
-  /** rad/s. */
-  readonly re: number;
-  readonly im: number;
-  /**
-   * How far it moves, rad/s, when every element value is off by one unit of rounding: ε·Σ|p·∂s/∂p|. Errors are of this
-   * size. Near a multiple one it is what a multiple one may move by.
-   */
-  readonly uncertainty: number;
-  /** How many coincide within their uncertainties; each of them is in the list, all at their mean. */
-  readonly multiplicity: number;
-}
-
 export type NaturalFrequencies =
   | { readonly kind: 'regular'; readonly list: readonly NaturalFrequency[] }
   | { readonly kind: 'singular' }
   | { readonly kind: 'unsettled' };
-
-/** How many uncertainties apart two values may lie and still be taken for one. */
-export const COINCIDENT = 32;
 
 /**
  * The finite s with det(G + s·C) = 0: generalised eigenvalues at the scale `omega` (rad/s), each then made exact by
@@ -32,32 +18,45 @@ export const COINCIDENT = 32;
  * taken over the terms of the equations and not over their sums. The error of the quotient is of second order in those
  * of the vectors, so that the value is as exact as its condition in the element values allows, however the values
  * spread. Real ones are real; complex ones are exactly conjugate, the upper one first.
+ *
+ * The diagonal blocks of the block triangular form are taken one by one: stages that act on the next but not back have
+ * their own eigenvalues and nothing of each other's errors, so that equal stages have equal ones. Within one block a
+ * multiple eigenvalue is found as the mean of what it falls apart into.
  */
 export function naturalFrequencies(stamps: Stamps, size: number, omega: number): NaturalFrequencies {
+  const blocks = blockTriangular(stamps.pattern(size));
+  if (blocks === undefined) return { kind: 'singular' };
+  const found: Root[] = [];
+  for (const [block, { rows, columns }] of blocks.entries()) {
+    const outcome = rootsOfBlock(stamps.within(rows, columns), rows.length, omega);
+    if ('kind' in outcome) return outcome;
+    found.push(...outcome.map((root) => ({ ...root, block })));
+  }
+  return { kind: 'regular', list: gather(found).map(settle) };
+}
+
+function rootsOfBlock(stamps: Stamps, size: number, omega: number): readonly Refined[] | { readonly kind: 'singular' | 'unsettled' } {
   const matrices = stamps.toMatrices(size, omega);
   const outcome = generalisedEigenvalues(matrices);
   if (outcome.kind !== 'regular') return outcome;
   const { re, im } = outcome.finite;
+  if (re.length === 0) return [];
   const refiner = new Refiner(stamps, matrices, omega);
-  const found: Root[] = [];
+  const found: Refined[] = [];
   for (let k = 0; k < re.length; k++) {
     const y = im[k] ?? 0;
     // The lower one of a pair follows the upper one.
     if (y < 0) continue;
     const x = re[k] ?? 0;
     // Zeros are exact: they were found by rank.
-    const root = x === 0 && y === 0 ? { re: 0, im: 0, uncertainty: 0 } : refiner.refine(x, y, gapAt(re, im, k));
+    const root = x === 0 && y === 0 ? ORIGIN : refiner.refine(x, y, gapAt(re, im, k));
     found.push(root);
-    if (y > 0) found.push({ ...root, im: -root.im });
+    if (y > 0) found.push({ ...root, im: -root.im, raw: { re: root.raw.re, im: -root.raw.im } });
   }
-  return { kind: 'regular', list: gather(found.map(settle)) };
+  return found;
 }
 
-interface Root {
-  readonly re: number;
-  readonly im: number;
-  readonly uncertainty: number;
-}
+const ORIGIN: Refined = { re: 0, im: 0, uncertainty: 0, isRefined: true, raw: { re: 0, im: 0 } };
 
 /** The distance to the nearest other eigenvalue. */
 function gapAt(re: Float64Array, im: Float64Array, k: number): number {
@@ -69,14 +68,9 @@ function gapAt(re: Float64Array, im: Float64Array, k: number): number {
   return least;
 }
 
-/** A part that is nothing beside the uncertainty is nothing. */
-function settle(root: Root): Root {
-  const least = 8 * root.uncertainty;
-  return {
-    re: Math.abs(root.re) <= least && root.im !== 0 ? 0 : root.re,
-    im: root.im,
-    uncertainty: root.uncertainty,
-  };
+/** A real part of a pair that is nothing beside the uncertainty is nothing. */
+function settle(root: NaturalFrequency): NaturalFrequency {
+  return Math.abs(root.re) <= 8 * root.uncertainty && root.im !== 0 ? { ...root, re: 0 } : root;
 }
 
 const MOST_STEPS = 8;
@@ -112,7 +106,7 @@ class Refiner {
   }
 
   /** From an eigenvalue of the scaled pencil, and its distance to the next, to one in rad/s. */
-  refine(re: number, im: number, gap: number): Root {
+  refine(re: number, im: number, gap: number): Refined {
     const start = { re: re * this.omega, im: im * this.omega };
     begin(this.v);
     begin(this.w);
@@ -125,13 +119,13 @@ class Refiner {
       const moved = Math.hypot(next.re - at.re, next.im - at.im);
       // Further than a third of the way to another one, it might as well end there: then what was found stays.
       if (Math.hypot(next.re - start.re, next.im - start.im) > (gap * this.omega) / 3) {
-        return { ...start, uncertainty: Math.max(next.uncertainty, Math.min(moved, Math.hypot(start.re, start.im))) };
+        return { ...start, uncertainty: gap * this.omega, isRefined: false, raw: start };
       }
       at = { re: next.re, im: im === 0 ? 0 : next.im };
       uncertainty = next.uncertainty;
       if (moved <= Math.max(uncertainty, Number.EPSILON * Math.hypot(at.re, at.im))) break;
     }
-    return { ...at, uncertainty: Math.min(uncertainty, Math.hypot(at.re, at.im)) };
+    return { ...at, uncertainty: Math.min(uncertainty, Math.hypot(at.re, at.im)), isRefined: true, raw: start };
   }
 
   /**
@@ -179,7 +173,7 @@ class Refiner {
     x.im.set(kept.im);
   }
 
-  private quotient(at: { readonly re: number; readonly im: number }): Root | undefined {
+  private quotient(at: { readonly re: number; readonly im: number }): Pick<Refined, 're' | 'im' | 'uncertainty'> | undefined {
     const { stamps, forms, rows, columns, v, w, scaledV, scaledW } = this;
     for (let k = 0; k < rows.length; k++) {
       scaledV.re[k] = (v.re[k] ?? 0) * (columns[k] ?? 1);
@@ -227,45 +221,4 @@ function normalise({ re, im }: Vector): void {
     re[k] = (re[k] ?? 0) / most;
     im[k] = (im[k] ?? 0) / most;
   }
-}
-
-/** An m-fold eigenvalue that is perturbed by ε spreads by some ᵐ√ε; what lies further apart is not one. */
-function spread(multiplicity: number, size: number): number {
-  return (64 * Number.EPSILON) ** (1 / multiplicity) * size;
-}
-
-/** Finds those that coincide within their uncertainties, and puts them at their mean, which is far better determined. */
-function gather(roots: readonly Root[]): NaturalFrequency[] {
-  const groupOf = roots.map((_, k) => k);
-  const uncertainties = roots.map(({ uncertainty }) => uncertainty);
-  roots.forEach((root, k) => {
-    const size = Math.hypot(root.re, root.im);
-    const others = roots
-      .map((other, index) => ({ index, distance: Math.hypot(other.re - root.re, other.im - root.im) }))
-      .sort((a, b) => a.distance - b.distance || a.index - b.index);
-    for (let m = roots.length; m > 1; m--) {
-      const reach = Math.min(COINCIDENT * root.uncertainty, spread(m, size));
-      if ((others[m - 1]?.distance ?? Infinity) > reach) continue;
-      uncertainties[k] = Math.min(root.uncertainty, spread(m, size));
-      for (const { index } of others.slice(0, m)) join(groupOf, k, index);
-      break;
-    }
-  });
-  return roots.map((root, k) => {
-    const members = roots.filter((_, other) => groupOf[other] === groupOf[k]);
-    if (members.length === 1) return { ...root, multiplicity: 1 };
-    const mean = (pick: (one: Root) => number): number => members.reduce((sum, one) => sum + pick(one), 0) / members.length;
-    const isReal = members.some(({ im }) => im === 0) || (members.some(({ im }) => im > 0) && members.some(({ im }) => im < 0));
-    const most = Math.max(...uncertainties.filter((_, other) => groupOf[other] === groupOf[k]));
-    return { re: mean(({ re }) => re), im: isReal ? 0 : mean(({ im }) => im), uncertainty: most, multiplicity: members.length };
-  });
-}
-
-function join(groupOf: number[], one: number, other: number): void {
-  const from = groupOf[other] ?? other;
-  const to = groupOf[one] ?? one;
-  if (from === to) return;
-  groupOf.forEach((group, k) => {
-    if (group === from) groupOf[k] = to;
-  });
 }

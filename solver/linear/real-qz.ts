@@ -1,5 +1,5 @@
 import type { Spectrum } from './spectrum';
-import { NO_CONVERGENCE_AFTER } from './spectrum';
+import { ASIDE_EVERY, NO_CONVERGENCE_AFTER } from './spectrum';
 
 /**
  * The eigenvalues of a real pencil A − λB, A upper Hessenberg, B upper triangular and of full rank: the QZ iteration
@@ -87,7 +87,7 @@ function pairOf(a: Float64Array, b: Float64Array, size: number, k: number, re: F
 
 /** One step on rows and columns `first` to `last`, three or more. */
 function doubleShift(a: Float64Array, b: Float64Array, size: number, first: number, last: number, step: number): void {
-  let [x, y, z] = step % 10 === 0 ? EXCEPTIONAL : startOf(a, b, size, first, last);
+  let [x, y, z] = step % ASIDE_EVERY === 0 ? EXCEPTIONAL : startOf(a, b, size, first, last);
   for (let k = first; k < last; k++) {
     const from = Math.max(k - 1, first);
     const low = Math.min(k + 3, last);

@@ -4,5 +4,12 @@ export interface Spectrum {
   readonly im: Float64Array;
 }
 
-/** So many steps without an eigenvalue, and the iteration is given up; it usually takes two or three. */
-export const NO_CONVERGENCE_AFTER = 60;
+/**
+ * After so many steps for one eigenvalue the shift is taken at random, in case the iteration goes in circles. It usually
+ * takes two or three; beside a multiple one it gains only some two bits a step, and must not be disturbed before it is
+ * through.
+ */
+export const ASIDE_EVERY = 40;
+
+/** So many steps without an eigenvalue, and the iteration is given up. */
+export const NO_CONVERGENCE_AFTER = 120;

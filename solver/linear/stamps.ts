@@ -36,6 +36,28 @@ export class Stamps {
     return rest;
   }
 
+  /** The columns in which each row has anything. */
+  pattern(size: number): readonly (readonly number[])[] {
+    const columns = Array.from({ length: size }, () => new Set<number>());
+    this.forEachEntry((row, column) => columns[row]?.add(column));
+    return columns.map((set) => [...set]);
+  }
+
+  /** What of the terms lies in some rows and columns, which are numbered anew from 0. */
+  within(rows: readonly number[], columns: readonly number[]): Stamps {
+    const rowAt = new Map(rows.map((row, k) => [row, k]));
+    const columnAt = new Map(columns.map((column, k) => [column, k]));
+    const part = new Stamps();
+    for (let k = 0; k < this.length; k++) {
+      const [a = -1, b = -1, p = -1, q = -1] = this.places.slice(4 * k, 4 * k + 4);
+      const [i, j] = [rowAt.get(a) ?? -1, rowAt.get(b) ?? -1];
+      const [m, n] = [columnAt.get(p) ?? -1, columnAt.get(q) ?? -1];
+      if ((i < 0 && j < 0) || (m < 0 && n < 0)) continue;
+      part.add(i, j, m, n, this.constants[k] ?? 0, this.slopes[k] ?? 0, this.exact[k] ?? false);
+    }
+    return part;
+  }
+
   /** G − λB with λ = s/omega and B = −omega·C, with the errors that ε in each element and in each sum makes. */
   toMatrices(size: number, omega: number): PencilMatrices {
     const pencil = emptyPencil(size);

@@ -68,6 +68,30 @@ describe('poles and zeros of simple networks', () => {
     expect(Math.abs((gain ?? 0) * rc ** 3 - 1)).toBeLessThanOrEqual(256 * Number.EPSILON);
   });
 
+  it('of a ladder that is critically damped to the third order are three in one place', () => {
+    // 1/(s + 1)³: (s³ + 3s)/(3s² + 1) is the continued fraction s/3 + 1/(9s/8 + 1/(8s/3)).
+    const list = network(voltageSource('V1', 's', '0', 1), inductor('L1', 's', 'a', 8 / 3), capacitor('C1', 'a', '0', 9 / 8), inductor('L2', 'a', 'o', 1 / 3), resistor('R1', 'o', '0', 1));
+    const { poles, gain } = found(polesAndZeros(list, toNode('o')));
+    expect(poles.map(({ s, multiplicity }) => [s.im, multiplicity])).toEqual([[0, 3], [0, 3], [0, 3]]);
+    for (const { s } of poles) expect(Math.abs(s.re + 1)).toBeLessThanOrEqual(256 * Number.EPSILON);
+    expect(Math.abs((gain ?? 0) - 1)).toBeLessThanOrEqual(1024 * Number.EPSILON);
+  });
+
+  it('of two equal resonances behind a buffer are two pairs, each twice in its place', () => {
+    const tank = (id: string, from: string, to: string): Element[] => [
+      resistor(`R${id}`, from, `${id}a`, 30),
+      inductor(`L${id}`, `${id}a`, to, 1e-3),
+      capacitor(`C${id}`, to, '0', 1e-7),
+    ];
+    const list = network(voltageSource('V1', 's', '0', 1), ...tank('1', 's', 'm'), buffer('E1', 'm', 'n'), ...tank('2', 'n', 'o'));
+    const { poles, stability } = found(polesAndZeros(list, toNode('o')));
+    const sigma = -30 / 2e-3;
+    const omega = Math.sqrt(1e10 - sigma ** 2);
+    expectRoots(poles, [[sigma, omega], [sigma, omega], [sigma, -omega], [sigma, -omega]]);
+    expect(poles.map(({ multiplicity }) => multiplicity)).toEqual([2, 2, 2, 2]);
+    expect(stability).toBe('stable');
+  });
+
   it('of a first-order all-pass: a pole left and a zero right, and a gain of −1', () => {
     const list = network(
       voltageSource('V1', 's', '0', 1),
