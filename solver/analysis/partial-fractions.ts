@@ -26,7 +26,7 @@ type Pair = readonly [re: number, im: number];
  * Partial fractions of a transfer function, from its poles and zeros: residues of single poles as products of
  * distances; of multiple ones, the Taylor coefficients of (s − p)^m·H at p, by the recurrence that its logarithmic
  * derivative gives; the polynomial in the same way at infinity (Henrici, *Applied and Computational Complex Analysis* 1,
- * 1974, sections 1.9 and 7.1). Nothing is subtracted but poles and zeros from each other, so that a residue is as exact
+ * 1974). Nothing is subtracted but poles and zeros from each other, so that a residue is as exact
  * as those distances: `relativeError` is their uncertainties over them. Close poles that do not coincide have residues
  * that are huge and opposite; what they add up to has lost as much.
  */

@@ -14,7 +14,7 @@ export type NaturalFrequencies =
 
 /**
  * The finite s with det(G + s·C) = 0: generalised eigenvalues at the scale `omega` (rad/s), each then made exact by
- * Rayleigh's quotient −wᵀGv/wᵀCv of its left and right vectors (Ostrowski 1958–59, doi 10.1007/BF00284275), which is
+ * Rayleigh's quotient −wᵀGv/wᵀCv of its left and right vectors (Ostrowski 1958–59, for matrices that are not symmetric), which is
  * taken over the terms of the equations and not over their sums. The error of the quotient is of second order in those
  * of the vectors, so that the value is as exact as its condition in the element values allows, however the values
  * spread. Real ones are real; complex ones are exactly conjugate, the upper one first.

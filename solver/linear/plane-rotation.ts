@@ -1,6 +1,6 @@
 /**
  * A complex plane rotation: (x, y) becomes (c·x + s·y, −s̄·x + c·y), with c real (Givens; Golub and Van Loan, *Matrix
- * Computations*, 4th ed. 2013, section 5.1.13). One object serves a whole reduction.
+ * Computations*, 4th ed. 2013, chapter 5). One object serves a whole reduction.
  */
 export class PlaneRotation {
   private c = 1;
