@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { SIGN_IN_ERRORS, signInErrorText } from '@/app/_shared/sign-in-error';
 
 /*

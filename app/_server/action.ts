@@ -15,7 +15,7 @@ type Context<V, I> = { readonly viewer: V; readonly input: I; readonly address: 
  * Every server action is made here. The client's input is checked against `input`, the viewer against `permission`,
  * and only then does `work` run; its answer is a value, whatever happens.
  */
-export function action<S extends z.ZodType, T>(
+export function action<S extends z.core.$ZodType, T>(
   declaration: {
     readonly name: string;
     readonly permission: Permission;
@@ -40,7 +40,7 @@ export function action<S extends z.ZodType, T>(
 }
 
 /** A server action for someone who has no session yet. */
-export function publicAction<S extends z.ZodType, T>(
+export function publicAction<S extends z.core.$ZodType, T>(
   declaration: { readonly name: string; readonly input: S },
   work: (context: Context<null, z.output<S>>) => Promise<Result<T>>,
 ): (input: z.input<S>) => Promise<Result<T>> {

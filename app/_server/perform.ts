@@ -1,7 +1,7 @@
 import 'server-only';
 import { randomBytes } from 'node:crypto';
 import { unstable_rethrow } from 'next/navigation';
-import type { z } from 'zod';
+import { z } from 'zod';
 import type { Result } from '@/app/_shared/result';
 import type { Viewer } from '@/app/_shared/wire';
 import { isUnavailable } from '@/db/client';
@@ -69,8 +69,8 @@ export function authorise<I>(
 }
 
 /** Reads untrusted input; every message is the schema's own, so none can carry what was sent. */
-export function parseInput<S extends z.ZodType>(schema: S, data: unknown): Result<z.output<S>> {
-  const read = schema.safeParse(data);
+export function parseInput<S extends z.core.$ZodType>(schema: S, data: unknown): Result<z.output<S>> {
+  const read = z.safeParse(schema, data);
   if (read.success) return success(read.data);
   const fields: Record<string, string> = Object.create(null);
   for (const issue of read.error.issues) {

@@ -19,7 +19,7 @@ const PRIVATE = { 'Cache-Control': 'private, no-store' };
  * @param declaration.params the schema of the path's segments: an id of the wrong form is not found.
  * @param declaration.query the schema of the search parameters, each given once, as text.
  */
-export function route<P extends z.ZodType, Q extends z.ZodType, T>(
+export function route<P extends z.core.$ZodType, Q extends z.core.$ZodType, T>(
   declaration: {
     readonly name: string;
     readonly permission: Permission;
@@ -44,7 +44,7 @@ export function route<P extends z.ZodType, Q extends z.ZodType, T>(
         flood: 'read',
         address: clientAddress(request.headers),
         parse: () => {
-          const params = declaration.params.safeParse(segments ?? {});
+          const params = z.safeParse(declaration.params, segments ?? {});
           if (!params.success) return failure('notFound');
           const query = parseInput(declaration.query, Object.fromEntries(new URL(request.url).searchParams));
           return query.ok ? success({ params: params.data, query: query.value }) : query;

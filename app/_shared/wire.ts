@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { ROLES, type Role } from '@/app/_shared/roles';
 import { NOTE_CLASSES, noteAnchorSchema, type NoteAnchor, type NoteClass } from '@/canvas/document/notes';
 import { MAX_DOCUMENT_CHARACTERS } from '@/canvas/document/limits';
@@ -8,39 +8,40 @@ import { MAX_DOCUMENT_CHARACTERS } from '@/canvas/document/limits';
  * the answers as types. A document crosses as text and is validated on the server before it is stored.
  */
 
-export const idSchema = z.string().regex(/^[0-9A-Za-z_-]{10,32}$/, 'That is not an identifier of this application.');
-export const sheetNameSchema = z
-  .string()
-  .trim()
-  .min(1, 'Give the sheet a name.')
-  .max(120, 'A sheet name has at most 120 characters.');
+/** Text that says something, without the blanks about it. */
+function line(missing: string, most: number, tooLong: string) {
+  return z.string().check(z.trim(), z.minLength(1, missing), z.maxLength(most, tooLong));
+}
+
+export const idSchema = z.string().check(z.regex(/^[0-9A-Za-z_-]{10,32}$/, 'That is not an identifier of this application.'));
+export const sheetNameSchema = line('Give the sheet a name.', 120, 'A sheet name has at most 120 characters.');
 export const documentTextSchema = z
   .string()
-  .max(MAX_DOCUMENT_CHARACTERS, 'This sheet is larger than the server keeps (2 million characters).');
-export const revisionSchema = z.number().int().min(0).max(2_147_483_647);
+  .check(z.maxLength(MAX_DOCUMENT_CHARACTERS, 'This sheet is larger than the server keeps (2 million characters).'));
+export const revisionSchema = z.int().check(z.minimum(0), z.maximum(2_147_483_647));
 export const passwordSchema = z
   .string()
-  .min(10, 'A password has at least 10 characters.')
-  .max(200, 'A password has at most 200 characters.');
+  .check(
+    z.minLength(10, 'A password has at least 10 characters.'),
+    z.maxLength(200, 'A password has at most 200 characters.'),
+  );
 export const emailSchema = z
   .string()
-  .trim()
-  .toLowerCase()
-  .max(254, 'An e-mail address has at most 254 characters.')
-  .pipe(z.email('That is not an e-mail address.'));
-export const noteTextSchema = z
-  .string()
-  .trim()
-  .min(1, 'Write the note first.')
-  .max(4000, 'A note has at most 4000 characters.');
+  .check(
+    z.trim(),
+    z.toLowerCase(),
+    z.maxLength(254, 'An e-mail address has at most 254 characters.'),
+    z.email('That is not an e-mail address.'),
+  );
+export const noteTextSchema = line('Write the note first.', 4000, 'A note has at most 4000 characters.');
 
 export const signUpInput = z.object({
-  name: z.string().trim().min(1, 'Say what colleagues call you.').max(80, 'A name has at most 80 characters.'),
+  name: line('Say what colleagues call you.', 80, 'A name has at most 80 characters.'),
   email: emailSchema,
   password: passwordSchema,
-  team: z.string().trim().min(1, 'Give the team a name.').max(80, 'A team name has at most 80 characters.'),
+  team: line('Give the team a name.', 80, 'A team name has at most 80 characters.'),
 });
-export const changePasswordInput = z.object({ current: z.string().min(1).max(200), next: passwordSchema });
+export const changePasswordInput = z.object({ current: z.string().check(z.minLength(1), z.maxLength(200)), next: passwordSchema });
 
 export const createSheetInput = z.object({ name: sheetNameSchema });
 export const importSheetInput = z.object({ text: documentTextSchema });
@@ -50,14 +51,14 @@ export const sheetInput = z.object({ id: idSchema });
 /** Clones the sheet as it stands, a snapshot of it, or (after a conflict) the text that this machine holds. */
 export const cloneSheetInput = z.object({
   id: idSchema,
-  snapshotId: idSchema.optional(),
-  document: documentTextSchema.optional(),
-  name: sheetNameSchema.optional(),
+  snapshotId: z.optional(idSchema),
+  document: z.optional(documentTextSchema),
+  name: z.optional(sheetNameSchema),
 });
 export const takeSnapshotInput = z.object({
   id: idSchema,
   revision: revisionSchema,
-  name: z.string().trim().min(1, 'Give the snapshot a name.').max(120, 'A snapshot name has at most 120 characters.'),
+  name: line('Give the snapshot a name.', 120, 'A snapshot name has at most 120 characters.'),
 });
 export const restoreSnapshotInput = z.object({ snapshotId: idSchema, revision: revisionSchema });
 export const createNoteInput = z.object({
@@ -71,9 +72,9 @@ export const noteInput = z.object({ noteId: idSchema });
 export const changeRoleInput = z.object({ memberId: idSchema, role: z.enum(ROLES) });
 export const memberInput = z.object({ memberId: idSchema });
 export const listSheetsInput = z.object({
-  search: z.string().max(120).default(''),
-  sort: z.enum(['changed', 'name', 'created']).default('changed'),
-  archived: z.boolean().default(false),
+  search: z._default(z.string().check(z.maxLength(120)), ''),
+  sort: z._default(z.enum(['changed', 'name', 'created']), 'changed'),
+  archived: z._default(z.boolean(), false),
 });
 export type ListSheetsInput = z.infer<typeof listSheetsInput>;
 

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { MAX_DOCUMENT_CHARACTERS } from './limits';
 import { validateSheetDocument } from './schema';
 import type { SheetDocument } from './types';
@@ -9,8 +9,8 @@ const FILE_VERSION = 1;
 
 const envelope = z.object({
   format: z.literal(FORMAT),
-  fileVersion: z.number().int().min(1),
-  name: z.string().trim().min(1).max(120),
+  fileVersion: z.int().check(z.minimum(1)),
+  name: z.string().check(z.trim(), z.minLength(1), z.maxLength(120)),
   document: z.unknown(),
 });
 

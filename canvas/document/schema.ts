@@ -1,13 +1,13 @@
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { PART_KINDS } from '../parts/registry';
 import { MAX_COORDINATE, MAX_CORNERS, MAX_DOCUMENT_CHARACTERS, MAX_PARTS, MAX_PURPOSE, MAX_TEXT, MAX_WIRES } from './limits';
 import { repair } from './repair';
 import type { SheetDocument } from './types';
 
-const idText = z.string().regex(/^[0-9A-Za-z_-]{1,40}$/);
-const coordinate = z.number().int().min(-MAX_COORDINATE).max(MAX_COORDINATE);
+const idText = z.string().check(z.regex(/^[0-9A-Za-z_-]{1,40}$/));
+const coordinate = z.int().check(z.minimum(-MAX_COORDINATE), z.maximum(MAX_COORDINATE));
 const point = z.object({ x: coordinate, y: coordinate });
-const pinRef = z.object({ part: idText, pin: z.string().min(1).max(20) });
+const pinRef = z.object({ part: idText, pin: z.string().check(z.minLength(1), z.maxLength(20)) });
 
 const part = z.object({
   id: idText,
@@ -15,23 +15,25 @@ const part = z.object({
   at: point,
   turn: z.union([z.literal(0), z.literal(90), z.literal(180), z.literal(270)]),
   mirrored: z.boolean(),
-  designator: z.string().max(20),
-  values: z.record(z.string().max(40), z.string().max(MAX_TEXT)),
+  designator: z.string().check(z.maxLength(20)),
+  values: z.record(z.string().check(z.maxLength(40)), z.string().check(z.maxLength(MAX_TEXT))),
 });
 
-const wire = z.object({ id: idText, from: pinRef, to: pinRef, corners: z.array(point).max(MAX_CORNERS) });
+const wire = z.object({ id: idText, from: pinRef, to: pinRef, corners: z.array(point).check(z.maxLength(MAX_CORNERS)) });
+
+const bandEdge = z.number().check(z.minimum(1e-6), z.maximum(1e15));
 
 /** The one schema of a sheet document, version 1. */
 export const sheetDocumentSchema = z.object({
   version: z.literal(1),
-  purpose: z.string().max(MAX_PURPOSE),
-  operatingFrequency: z.string().min(1).max(40),
+  purpose: z.string().check(z.maxLength(MAX_PURPOSE)),
+  operatingFrequency: z.string().check(z.minLength(1), z.maxLength(40)),
   band: z
-    .object({ fromHz: z.number().min(1e-6).max(1e15), toHz: z.number().min(1e-6).max(1e15) })
-    .refine((band) => band.toHz > band.fromHz, { message: 'the band must rise' }),
+    .object({ fromHz: bandEdge, toHz: bandEdge })
+    .check(z.refine((band) => band.toHz > band.fromHz, { message: 'the band must rise' })),
   convention: z.object({ amplitude: z.enum(['rms', 'peak']), form: z.enum(['polar', 'rectangular']) }),
-  parts: z.array(part).max(MAX_PARTS),
-  wires: z.array(wire).max(MAX_WIRES),
+  parts: z.array(part).check(z.maxLength(MAX_PARTS)),
+  wires: z.array(wire).check(z.maxLength(MAX_WIRES)),
 });
 
 export type DocumentResult =

@@ -3,7 +3,7 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { FormFoot } from '../form-foot';
 import { loadPage } from '@/app/_client/load-page';
 import { signInWithPassword } from '@/app/_client/session';
@@ -15,7 +15,7 @@ import { TextField } from '@/components/text-field';
 const schema = z.object({
   email: emailSchema,
   // Not the rules of a new password: an old one may be from before them.
-  password: z.string().min(1, 'Type your password.').max(200, 'A password has at most 200 characters.'),
+  password: z.string().check(z.minLength(1, 'Type your password.'), z.maxLength(200, 'A password has at most 200 characters.')),
 });
 
 export type SignInFormProps = {

@@ -4,7 +4,8 @@ import { noParams, route } from '@/app/_server/route';
 import { listSheetsInput } from '@/app/_shared/wire';
 import { listSheets } from '@/db/queries/sheets';
 
-const query = listSheetsInput.extend({
+const query = z.object({
+  ...listSheetsInput.shape,
   archived: z
     .enum(['true', 'false'])
     .default('false')

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { freeDesignator } from '../../document/designators';
 import { designatorsOf, extentOf } from '../../document/lookup';
 import { emptySheetDocument, validateSheetDocument } from '../../document/schema';
