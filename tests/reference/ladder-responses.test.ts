@@ -1,6 +1,15 @@
 import { describe, expect, it } from 'vitest';
+import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
 import type { ComplexLike } from '../solver/support/expect';
-import { atHalfPower, bessel, besselHalfPower, besselOnVoltageSource, besselTransfer } from './support/bessel-ladders';
+import { network } from '../solver/support/networks';
+import {
+  atHalfPower,
+  bessel,
+  besselDelay,
+  besselHalfPower,
+  besselOnVoltageSource,
+  besselTransfer,
+} from './support/bessel-ladders';
 import type { BuiltLadder, Ladder } from './support/ladders';
 import {
   butterworth,
@@ -74,6 +83,29 @@ describe.each([true, false])('doubly terminated, shunt first: %s', (shuntFirst) 
 
   it.each(ORDERS)('Bessel of order %d follows θ(0)/θ(jω), in phase too', (n) => {
     expectPhasor(n, ladderNetwork(bessel(n), shuntFirst), 2, (omega) => besselTransfer(n, omega));
+  });
+
+  it.each(ORDERS)('Bessel of order %d has the group delay of its polynomial by its poles, 1 s at low frequencies', (n) => {
+    const { elements, out } = ladderNetwork(bessel(n), shuntFirst);
+    const found = polesAndZeros(network(...elements), {
+      kind: 'transfer',
+      source: 'V1',
+      output: { quantity: 'voltage', node: out },
+    });
+    if (!found.ok) throw new Error(found.message);
+    expect(found.zeros).toEqual([]);
+    for (const omega of [0, ...OMEGAS]) {
+      let [delay, bound] = [0, 0];
+      for (const { s, uncertainty } of found.poles) {
+        const square = s.re ** 2 + (omega - s.im) ** 2;
+        delay += -s.re / square;
+        bound += (4 * uncertainty) / square;
+      }
+      const promised = besselDelay(n, omega);
+      expect(Math.abs(delay - promised), `at ${omega}`).toBeLessThanOrEqual(bound + 16 * Number.EPSILON * promised);
+      expect(bound, 'the poles are sharp enough to tell').toBeLessThanOrEqual(1e-9);
+    }
+    expect(besselDelay(n, 0)).toBe(1);
   });
 
   it.each(ORDERS)('Bessel of order %d by half power has it at 1 rad/s, and the same shape', (n) => {

@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
+import { network } from '../solver/support/networks';
 import {
   BESSEL,
   BESSEL_3_DECIBELS,
@@ -17,7 +19,13 @@ import {
   PRINTED_EVEN_LOAD,
 } from './data/ladder-prototypes';
 import { atHalfPower, bessel, besselHalfPower, besselOnVoltageSource } from './support/bessel-ladders';
-import { butterworth, butterworthOnVoltageSource, chebyshev, chebyshevOnVoltageSource } from './support/ladders';
+import {
+  butterworth,
+  butterworthOnVoltageSource,
+  chebyshev,
+  chebyshevOnVoltageSource,
+  ladderNetwork,
+} from './support/ladders';
 
 /** The published tables against the closed forms that the ladders of the other tests are built by. */
 
@@ -50,6 +58,22 @@ describe('Butterworth', () => {
     // Q = 1/(2 sin((2k − 1)π/2n)), the poles being spread evenly over half a circle; the largest last.
     const qualities = Array.from({ length: Math.floor(n / 2) }, (_, k) => 1 / (2 * Math.sin(((2 * k + 1) * Math.PI) / (2 * n))));
     expectTable(qualities.reverse(), row, FOUR);
+  });
+
+  it.each(Object.entries(BUTTERWORTH_QUALITIES))('order %s: the same qualities of the poles of its ladder', (order, row) => {
+    const { elements, out } = ladderNetwork(butterworth(Number(order)), true);
+    const found = polesAndZeros(network(...elements), { kind: 'transfer', source: 'V1', output: { quantity: 'voltage', node: out } });
+    if (!found.ok) throw new Error(found.message);
+    const qualities = found.poles.flatMap(({ s, q }) => (s.im > 0 ? [q ?? Infinity] : []));
+    expectTable(
+      qualities.sort((a, b) => a - b),
+      row,
+      FOUR,
+    );
+    // One stage of the first order is left of an odd order, at 1 rad/s.
+    const alone = found.poles.filter(({ s }) => s.im === 0);
+    expect(alone).toHaveLength(Number(order) % 2);
+    for (const { s } of alone) expect(Math.abs(s.re + 1)).toBeLessThanOrEqual(1e-12);
   });
 });
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Problem } from '@/solver';
 import { solve } from '@/solver';
+import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
 import { solved, unsolved } from '../solver/support/expect';
 import { network } from '../solver/support/networks';
 import type { ProblemCase } from './data/problem-cases';
@@ -39,5 +40,27 @@ describe('networks that have to be diagnosed', () => {
     for (const figure of figures) expectPrinted(readingOf(elements, figure)(figure.frequency), figure);
     for (const node of undetermined?.voltages ?? []) expect(solution.voltage(node), node).toBeUndefined();
     for (const element of undetermined?.currents ?? []) expect(solution.current(element), element).toBeUndefined();
+  });
+});
+
+/** (g): what grows without bound at its resonance has poles on the imaginary axis, there. */
+describe('a lossless circuit', () => {
+  it.each(['g series', 'g parallel'])('(%s) has its poles on the imaginary axis', (wanted) => {
+    const one = PROBLEM_CASES.find(({ id }) => id === wanted);
+    const [source] = one?.elements ?? [];
+    if (one === undefined || source === undefined) throw new Error('no such case');
+    const list = network(...one.elements);
+    const found = polesAndZeros(list, {
+      kind: 'transfer',
+      source: source.id,
+      output: { quantity: 'voltage', node: wanted === 'g series' ? '2' : '1' },
+    });
+    if (!found.ok) throw new Error(found.message);
+    expect(found.stability).toBe('marginal');
+    expect(found.poles).toHaveLength(2);
+    for (const { s, frequency, uncertainty } of found.poles) {
+      expect(Math.abs(s.re)).toBeLessThanOrEqual(8 * uncertainty);
+      expect(Math.abs(frequency / one.frequency - 1)).toBeLessThanOrEqual(1e-12);
+    }
   });
 });

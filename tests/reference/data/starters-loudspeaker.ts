@@ -32,6 +32,8 @@ function compensated(id: string, title: string, r: number, l: number, c: number,
   };
 }
 
+const OMEGA_48 = 2 * Math.PI * 48;
+
 const OMEGA_2200 = 2 * Math.PI * 2200;
 
 /** 20 W into the pad of 6.016 Ω. */
@@ -177,6 +179,23 @@ export const LOUDSPEAKER_STARTERS: readonly Circuit[] = [
     figures: [
       extreme('largest', ohms('s'), [40, 60], '47.98', '59.93'),
       extreme('smallest', ohms('s'), [200, 800], '397', '5.849'),
+    ],
+  },
+  {
+    id: 'ST-23 ideal',
+    title: 'the same driver with its values by the formulas',
+    source: 'Res = Re·Qms/Qes, C = Qes/(ωs·Re), L = Re/(ωs·Qes) (Small, JAES 1972) [memory]',
+    mark: 'computed',
+    elements: [
+      resistor('Re', 's', 'm', 5.8),
+      resistor('Res', 'm', '0', (5.8 * 4.2) / 0.45),
+      inductor('Lces', 'm', '0', 5.8 / (OMEGA_48 * 0.45)),
+      capacitor('Cmes', 'm', '0', 0.45 / (OMEGA_48 * 5.8)),
+    ],
+    figures: [
+      { kind: 'value', element: 'Res', printed: '54.13' },
+      { kind: 'value', element: 'Lces', printed: '42.74e-3' },
+      { kind: 'value', element: 'Cmes', printed: '257.3e-6' },
     ],
   },
   {

@@ -27,12 +27,14 @@ export const POWER_STARTERS: readonly Circuit[] = [
     id: 'ST-45',
     title: 'supply inductance with a capacitor bank, 9 MVA, 100 kvar, 400 V: parallel resonance',
     elements: [
-      inductor('Ls', 'b', '0', 56.59e-6),
-      capacitor('Cq', 'b', '0', 1989.4e-6),
+      inductor('Ls', 'b', '0', 400 ** 2 / 9e6 / OMEGA),
+      capacitor('Cq', 'b', '0', 100e3 / (OMEGA * 400 ** 2)),
       // Only so that there is an impedance at resonance.
       resistor('R9', 'b', '0', 1e9),
     ],
     figures: [
+      { kind: 'value', element: 'Ls', printed: '56.59e-6' },
+      { kind: 'value', element: 'Cq', printed: '1989.4e-6' },
       crossing('im', ohms('b'), 0, [300, 700], '474.3'),
       // The 9.487th harmonic, to half a thousandth.
       { ...crossing('im', ohms('b'), 0, [300, 700], '474.35'), within: 0.0005 * 50 },
@@ -107,6 +109,24 @@ export const POWER_STARTERS: readonly Circuit[] = [
       reading('magnitude', 'out', 50, '98.123', 4),
       // The efficiency in per cent: the power of the load against that delivered.
       reading('re', { of: 'powerShare', element: 'RL', source: 'V1' }, 50, '97.634', 0.01),
+    ],
+  },
+  {
+    id: 'ST-49 by its tests',
+    title: 'the values of the same: 1.8 % + j3.6 % of 16 Ω in two halves, 60 W and 2.5 % of 25 A without load',
+    source: 'short-circuit and no-load test',
+    mark: 'computed',
+    elements: [
+      resistor('R1', 'p', 'a', (0.018 * 16) / 2),
+      inductor('L1', 'a', 'm', (0.036 * 16) / 2 / OMEGA),
+      resistor('Rfe', 'm', '0', 400 ** 2 / 60),
+      inductor('Lm', 'm', '0', 400 / (OMEGA * Math.sqrt((0.025 * 25) ** 2 - (60 / 400) ** 2))),
+    ],
+    figures: [
+      { kind: 'value', element: 'R1', printed: '0.144' },
+      { kind: 'value', element: 'L1', printed: '0.9167e-3' },
+      { kind: 'value', element: 'Rfe', printed: '2.667e3' },
+      { kind: 'value', element: 'Lm', printed: '2.0985' },
     ],
   },
   {

@@ -128,6 +128,14 @@ export function besselTransfer(n: number, omega: number): { readonly re: number;
   return { re: value.re.toNumber(), im: value.im.toNumber() };
 }
 
+/** The group delay of θ_n(0)/θ_n(jω), Re θ_n′(jω)/θ_n(jω), seconds; 1 at 0 Hz, by 64 digits. */
+export function besselDelay(n: number, omega: number): number {
+  const theta = reverseBessel(n);
+  const derivative = theta.slice(1).map((c, power) => c.times(power + 1));
+  const at = big(NOTHING, exact(omega));
+  return div(valueAt(derivative.map(real), at), valueAt(theta.map(real), at)).re.toNumber();
+}
+
 /** The frequency, rad/s, of half power of a delay of 1 s; by halving. */
 export function besselHalfPower(n: number): number {
   let [low, high] = [0.5, 8];
