@@ -22,6 +22,8 @@ export interface BranchSystem {
 export interface Freedom {
   /** Whether a solution exists at all. */
   readonly consistent: boolean;
+  /** How many solutions may be added to one, independent of each other. */
+  readonly dimension: number;
   /** Nodes whose voltage is not determined. */
   readonly nodes: readonly number[];
   /** Rows whose current, and rows whose voltage, is not determined. */
@@ -308,5 +310,5 @@ function freedomOf(
       if (isFree(aRe - bRe, aIm - bIm)) voltages.add(row);
     }
   }
-  return { consistent, nodes: [...nodes], currents: [...currents], voltages: [...voltages] };
+  return { consistent, dimension: nullVectors.length, nodes: [...nodes], currents: [...currents], voltages: [...voltages] };
 }

@@ -60,7 +60,7 @@ export function solveLinkedSystem(
       return { solved: false, condition, problems: [tooLargeProblem(network, components, frequency)] };
     }
     if (outcome !== 'solved') {
-      if (!isOnlyFloating(network, structure, outcome)) {
+      if (!isSaidElsewhere(components, system, outcome)) {
         problems.push(singularProblem(network, branches, components, outcome, frequency));
       }
       if (!outcome.consistent) return { solved: false, condition, problems };
@@ -117,11 +117,13 @@ function asSystem(
   };
 }
 
-/** Whether all that is free is the voltage of nodes without a reference, which is said elsewhere. */
-function isOnlyFloating(network: Network, { islandOf, referenceIsland }: Structure, freedom: Freedom): boolean {
-  if (!freedom.consistent || freedom.currents.length > 0) return false;
-  const apart = freedom.nodes.every((node) => islandOf[node] !== referenceIsland);
-  return apart && freedom.voltages.every((row) => islandOf[network.first[row] ?? 0] !== referenceIsland);
+/**
+ * Whether what is free comes from parts that nothing that conducts ties to the reference node, one freedom a part, which
+ * is said of them already: what senses such a part is as little determined as the part.
+ */
+function isSaidElsewhere(components: readonly Component[], { pinned }: BranchSystem, freedom: Freedom): boolean {
+  const floating = components.filter(({ grounded, nodes }) => !grounded && !pinned.has(nodes[0] ?? 0));
+  return freedom.consistent && freedom.dimension <= floating.length;
 }
 
 interface Unknown {

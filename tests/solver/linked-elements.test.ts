@@ -207,6 +207,24 @@ describe('operational amplifiers', () => {
     expect(answer).toMatchObject({ ok: false, kind: 'noFeedback', elements: ['U1'] });
   });
 
+  it('a follower of a node that nothing ties down is as little determined as the node, and that is said once', () => {
+    const answer = solve(
+      {
+        version: 1,
+        elements: [
+          r('R1', 'a', 'p', 1000),
+          c('C1', 'p', '0', 1e-9),
+          { id: 'U1', kind: 'operationalAmplifier', nodes: ['p', 'out', 'out'] },
+          r('R2', 'out', '0', 1000),
+        ],
+      },
+      { frequency: 0 },
+    );
+    const problems = answer.ok ? answer.problems : [answer];
+    expect(problems.map(({ kind, nodes }) => [kind, nodes])).toEqual([['floatingNode', ['a', 'p']]]);
+    expect(answer.ok && answer.voltage('out')).toBeUndefined();
+  });
+
   it('an integrator has no way back at 0 Hz, and has one above', () => {
     const elements = [
       { ...drive(), value: { rms: 1, phase: 0, frequency: null } } as Element,
