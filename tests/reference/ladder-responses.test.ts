@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
+import { polesAndZeros } from '@/solver';
 import type { ComplexLike } from '../solver/support/expect';
 import { network } from '../solver/support/networks';
 import {

@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Problem } from '@/solver';
-import { solve } from '@/solver';
-import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
+import { polesAndZeros, solve } from '@/solver';
 import { solved, unsolved } from '../solver/support/expect';
 import { network } from '../solver/support/networks';
 import type { ProblemCase } from './data/problem-cases';

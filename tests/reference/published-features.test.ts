@@ -1,10 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { Element } from '@/solver';
-import { levelCrossings, phaseCrossings } from '@/solver/features/crossings';
-import { extremesOf, rangeOver } from '@/solver/features/extremes';
-import { realCrossings } from '@/solver/features/real-curve';
-import type { Scan } from '@/solver/features/scan';
-import { scanResponse } from '@/solver/features/scan';
+import type { Element, Scan } from '@/solver';
+import { extremesOf, levelCrossings, phaseCrossings, rangeOver, realCrossings, scanResponse } from '@/solver';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';
 import { crossing, magnitude, peak, read, readingOf, valueOf } from './support/measure';

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { Root } from '@/solver/analysis/poles-and-zeros';
-import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
+import type { Root } from '@/solver';
+import { polesAndZeros } from '@/solver';
 import { network } from '../solver/support/networks';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';

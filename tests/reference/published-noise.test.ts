@@ -1,6 +1,6 @@
 import { describe, it } from 'vitest';
-import type { PortNodes } from '@/solver/analysis/two-port';
-import { noise, noiseTotal } from '@/solver/analysis/noise';
+import type { PortNodes } from '@/solver';
+import { noise, noiseTotal } from '@/solver';
 import { network } from '../solver/support/networks';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';

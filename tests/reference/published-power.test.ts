@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { equivalent } from '@/solver/analysis/equivalent';
+import { equivalent } from '@/solver';
 import { network } from '../solver/support/networks';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { SensitivityTrace } from '@/solver/analysis/sensitivity';
-import { sensitivity } from '@/solver/analysis/sensitivity';
+import type { SensitivityTrace } from '@/solver';
+import { sensitivity } from '@/solver';
 import { network } from '../solver/support/networks';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';
@@ -11,7 +11,7 @@ function tracesOf({ elements }: Circuit, { output, frequency }: SensitivityFigur
   if (output.of !== 'voltage') throw new Error('only voltages have sensitivities in the data');
   const found = sensitivity(
     network(...elements),
-    { quantity: 'voltage', plus: output.node, minus: output.over ?? '0' },
+    { quantity: 'voltageBetween', nodes: [output.node, output.over ?? '0'] },
     [frequency],
   );
   if (!found.ok) throw new Error(found.message);

@@ -1,6 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { matrixAt, twoPort } from '@/solver/analysis/two-port';
-import { insertionLoss } from '@/solver/analysis/two-port-figures';
+import { insertionLoss, matrixAt, twoPort } from '@/solver';
 import { network } from '../solver/support/networks';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';
