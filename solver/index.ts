@@ -34,6 +34,7 @@ export { sameFrequency } from './elements/source-value';
 export type { ElementListResult } from './elements/validate-element-list';
 export { validateElementList } from './elements/validate-element-list';
 
+export type { NetworkReading } from './analysis/network-reading';
 export type { Problem, ProblemKind } from './analysis/problem';
 export type { PowerBalance, Solution } from './analysis/solution';
 export type { SolveOptions } from './analysis/steady-state';

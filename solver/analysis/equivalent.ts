@@ -1,9 +1,10 @@
 import { Complex } from 'complex.js';
 import type { ElementList } from '../elements/element-list';
 import { ExtendedVector } from '../linear/extended';
+import { portNamed } from './network-reading';
 import type { Problem } from './problem';
-import { problem } from './problem';
-import { isProblem, ResponseOperator } from './response-operator';
+import { isProblem } from './problem';
+import { ResponseOperator } from './response-operator';
 import type { PortNodes } from './two-port';
 
 /** A load and the power that it takes. */
@@ -47,12 +48,9 @@ const NOTHING = 64 * Number.EPSILON;
 export function equivalent(list: ElementList, pair: PortNodes, frequency: number): Equivalent | Problem {
   const operator = ResponseOperator.of(list);
   if (isProblem(operator)) return operator;
-  const [first, second] = pair.map((node) => operator.nodeOf(node)) as [number | Problem, number | Problem];
-  if (isProblem(first)) return first;
-  if (isProblem(second)) return second;
-  if (first === second) {
-    return problem('invalid', [], [pair[0]], `Both nodes are ${pair[0]}; choose two different nodes.`);
-  }
+  const nodes = portNamed(operator.network, pair);
+  if (isProblem(nodes)) return nodes;
+  const [first, second] = nodes;
   const stuck = operator.prepare(frequency);
   if (stuck?.kind === 'invalid' || stuck?.kind === 'noData' || stuck?.kind === 'notFinite') return stuck;
   const x = new ExtendedVector();

@@ -4,9 +4,9 @@ import type { Law, Tabulated } from '../elements/law';
 import { ExtendedVector } from '../linear/extended';
 import { elementAt, rowOf } from './network';
 import type { Problem } from './problem';
-import { problem } from './problem';
+import { isProblem, problem } from './problem';
 import { BY_ADMITTANCE, BY_BRANCH, BY_SOURCE } from './response-layout';
-import { isProblem, ResponseOperator } from './response-operator';
+import { ResponseOperator } from './response-operator';
 import type { Factor, Product, Sum } from './symbols';
 import { admittanceSymbol, equationSymbols, negated, ONE, product } from './symbols';
 
@@ -17,14 +17,14 @@ export type NodalUnknown =
   | { readonly quantity: 'current'; readonly element: string; readonly port: number };
 
 /** A coefficient in symbols and in numbers. */
-export interface Coefficient {
+export interface NodalCoefficient {
   readonly sum: Sum;
   readonly re: number;
   readonly im: number;
 }
 
 /** A coefficient times an unknown, by its place among the unknowns. */
-export interface NodalTerm extends Coefficient {
+export interface NodalTerm extends NodalCoefficient {
   readonly unknown: number;
 }
 
@@ -38,7 +38,7 @@ export interface NodalEquation {
     /** A choice where the network leaves one: the voltage of a node in a part that floats, or a current in a loop, is 0. */
     | { readonly law: 'choice'; readonly unknown: number };
   readonly terms: readonly NodalTerm[];
-  readonly right: Coefficient;
+  readonly right: NodalCoefficient;
 }
 
 export interface NodalEquations {
@@ -180,7 +180,7 @@ class Writer {
     this.rights[row]?.push(...moved);
   }
 
-  private coefficient(sum: Sum): Coefficient {
+  private coefficient(sum: Sum): NodalCoefficient {
     let re = 0;
     let im = 0;
     for (const one of sum) {

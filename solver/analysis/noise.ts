@@ -1,12 +1,13 @@
 import type { ElementList } from '../elements/element-list';
 import { ExtendedVector } from '../linear/extended';
 import { integrate } from '../linear/quadrature';
+import { faultOfFrequency } from './frequency';
+import { nodesNamed } from './network-reading';
 import type { Problem } from './problem';
-import { problem } from './problem';
+import { isProblem, problem } from './problem';
 import { ProblemPlaces } from './problem-places';
 import { BY_BRANCH } from './response-layout';
-import { isProblem, ResponseOperator } from './response-operator';
-import { faultOfFrequency } from './steady-state';
+import { ResponseOperator } from './response-operator';
 import type { SweepProblem } from './sweep';
 import type { PortNodes } from './two-port';
 
@@ -174,11 +175,10 @@ class NoiseMeter {
     }
     const operator = ResponseOperator.of(list);
     if (isProblem(operator)) return operator;
-    const [plus, minus] = pair.map((node) => operator.nodeOf(node)) as [number | Problem, number | Problem];
-    if (isProblem(plus)) return plus;
-    if (isProblem(minus)) return minus;
+    const nodes = nodesNamed(operator.network, pair);
+    if (isProblem(nodes)) return nodes;
     const { sources, notCounted } = sourcesOf(operator);
-    return new NoiseMeter(operator, plus, minus, temperature, sources, notCounted);
+    return new NoiseMeter(operator, nodes[0], nodes[1], temperature, sources, notCounted);
   }
 
   get elements(): readonly string[] {

@@ -1,7 +1,5 @@
 import { Complex } from 'complex.js';
-import type { Element, ElementList } from '../elements/element-list';
-import { REFERENCE_NODE } from '../elements/element-list';
-import { portsOf } from '../elements/registry';
+import type { ElementList } from '../elements/element-list';
 import { validateElementList } from '../elements/validate-element-list';
 import type { NaturalFrequency } from '../linear/coincident-roots';
 import { COINCIDENT } from '../linear/coincident-roots';
@@ -10,22 +8,20 @@ import type { NaturalFrequencies } from '../linear/natural-frequencies';
 import { naturalFrequencies } from '../linear/natural-frequencies';
 import { balance } from '../linear/pencil-matrices';
 import type { Stamps } from '../linear/stamps';
+import type { Network } from './network';
+import { toNetwork } from './network';
+import type { NetworkReading } from './network-reading';
+import { portNamed, resolveReading, sourceNamed } from './network-reading';
 import type { Pencil } from './pencil';
 import { DRIVE, pencilOf, singularPencil } from './pencil';
 import type { Problem } from './problem';
-import { problem } from './problem';
+import { isProblem, problem } from './problem';
 import { ScaledProduct } from './scaled-product';
-
-/** What a transfer function gives: the voltage of a node over another (over the reference node, if none is named), or the current of an element. */
-export type TransferOutput =
-  | { readonly quantity: 'voltage'; readonly node: string; readonly over?: string }
-  /** Amperes, entering at the first node of the port; port 0 if none is named. */
-  | { readonly quantity: 'current'; readonly element: string; readonly port?: number };
 
 /** A ratio of two phasors as a function of s. */
 export type Transfer =
   /** An output over the value of an independent source (V or A), all other independent sources dead. */
-  | { readonly kind: 'transfer'; readonly source: string; readonly output: TransferOutput }
+  | { readonly kind: 'transfer'; readonly source: string; readonly output: NetworkReading }
   /** The voltage of the first node over the second, over the current sent in at the first and out at the second, ohms; all independent sources dead. */
   | { readonly kind: 'impedance'; readonly nodes: readonly [string, string] };
 
@@ -92,8 +88,8 @@ export interface PolesAndZeros {
 export function polesAndZeros(list: ElementList, transfer: Transfer): PolesAndZeros | Problem {
   const checked = validateElementList(list);
   if (!checked.ok) return problem('invalid', [], [], checked.message);
-  const ends = endsOf(checked.list.elements, transfer);
-  if ('ok' in ends) return ends;
+  const ends = endsOf(toNetwork(checked.list), transfer);
+  if (isProblem(ends)) return ends;
   const pencil = pencilOf(checked.list.elements, {
     currents: ends.currents,
     drivenNodes: transfer.kind === 'impedance' ? transfer.nodes : undefined,
@@ -127,45 +123,36 @@ interface Ends {
   readonly around: readonly string[];
 }
 
-function endsOf(elements: readonly Element[], transfer: Transfer): Ends | Problem {
-  const nodes = new Set(elements.flatMap((element) => portsOf(element).flat()));
-  nodes.add(REFERENCE_NODE);
-  const missingNode = (node: string): Problem =>
-    problem('invalid', [], [], `There is no node ${node} in the element list.`);
+function endsOf(network: Network, transfer: Transfer): Ends | Problem {
   if (transfer.kind === 'impedance') {
-    const missing = transfer.nodes.find((node) => !nodes.has(node));
-    if (missing !== undefined) return missingNode(missing);
+    const nodes = portNamed(network, transfer.nodes);
+    if (isProblem(nodes)) return nodes;
     const source = [DRIVE, 0] as const;
     return { source, sentThrough: transfer.nodes, output: { nodes: transfer.nodes }, currents: [source], around: transfer.nodes };
   }
-  const element = elements.find(({ id }) => id === transfer.source);
-  if (element === undefined) return noElement(transfer.source);
-  if (element.kind !== 'voltageSource' && element.kind !== 'currentSource') {
-    const message = `${element.id} is not an independent source, so nothing can be given in terms of its value. Name a voltage or a current source.`;
-    return problem('invalid', [element.id], [], message);
-  }
-  const source = [element.id, 0] as const;
-  const sentThrough = element.kind === 'currentSource' ? element.nodes : undefined;
   const { output } = transfer;
-  if (output.quantity === 'voltage') {
-    const pair = [output.node, output.over ?? REFERENCE_NODE] as const;
-    const missing = pair.find((node) => !nodes.has(node));
-    if (missing !== undefined) return missingNode(missing);
-    return { source, sentThrough, output: { nodes: pair }, currents: [source], around: [...element.nodes, ...pair] };
+  const row = sourceNamed(network, transfer.source);
+  if (isProblem(row)) return row;
+  const reading = resolveReading(network, output);
+  if (isProblem(reading)) return reading;
+  const source = [transfer.source, 0] as const;
+  const sourceNodes = nodesOfRow(network, row);
+  const sentThrough = network.laws[row]?.law === 'current' ? sourceNodes : undefined;
+  if (output.quantity === 'current') {
+    const through = [output.element, output.port ?? 0] as const;
+    const around = [...sourceNodes, ...(reading.kind === 'current' ? nodesOfRow(network, reading.row) : [])];
+    return { source, sentThrough, output: { port: through }, currents: [source, through], around };
   }
-  const sensed = elements.find(({ id }) => id === output.element);
-  if (sensed === undefined) return noElement(output.element);
-  const port = output.port ?? 0;
-  const portNodes = portsOf(sensed)[port];
-  if (portNodes === undefined) {
-    return problem('invalid', [sensed.id], [], `${sensed.id} has no port ${port}; its ports are counted from 0.`);
-  }
-  const through = [sensed.id, port] as const;
-  return { source, sentThrough, output: { port: through }, currents: [source, through], around: [...element.nodes, ...portNodes] };
+  const nodes = reading.kind === 'between' ? namesOf(network, reading.one, reading.other) : sourceNodes;
+  return { source, sentThrough, output: { nodes }, currents: [source], around: [...sourceNodes, ...nodes] };
 }
 
-function noElement(id: string): Problem {
-  return problem('invalid', [], [], `There is no element ${id} in the element list.`);
+function nodesOfRow(network: Network, row: number): readonly [string, string] {
+  return namesOf(network, network.first[row] ?? 0, network.second[row] ?? 0);
+}
+
+function namesOf({ nodeNames }: Network, one: number, other: number): readonly [string, string] {
+  return [nodeNames[one] ?? '', nodeNames[other] ?? ''];
 }
 
 /** A voltage between parts that nothing joins is not determined, and a current from one into the other has no way back. */

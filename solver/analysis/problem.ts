@@ -47,6 +47,16 @@ export function problem(
   return { ok: false, kind, elements, nodes, message };
 }
 
+/** A faulty request, with the nodes and elements that it names where they exist. */
+export function invalid(message: string, nodes: readonly string[] = [], elements: readonly string[] = []): Problem {
+  return problem('invalid', elements, nodes, message);
+}
+
+/** Narrows to a problem. */
+export function isProblem(value: unknown): value is Problem {
+  return typeof value === 'object' && value !== null && 'ok' in value && value.ok === false;
+}
+
 /** Names in a sentence: "R1", "R1 and R2", "R1, R2 and R3"; more than `most` are counted, not listed. */
 export function listNames(names: readonly string[], most = 6): string {
   const shown = names.length > most ? [...names.slice(0, most - 1), `${names.length - most + 1} more`] : [...names];

@@ -3,12 +3,12 @@ import { isLive, phasorIm, phasorRe } from '../elements/source-value';
 import { validateElementList } from '../elements/validate-element-list';
 import { ExtendedSolver, ExtendedVector } from '../linear/extended';
 import { SparseLu } from '../linear/sparse-lu';
+import { faultOfFrequency } from './frequency';
 import type { Network } from './network';
 import { elementAt, toNetwork } from './network';
 import type { Problem } from './problem';
 import { listNames, nodeWords, problem } from './problem';
 import { BY_ADMITTANCE, BY_BRANCH, ResponseLayout } from './response-layout';
-import { faultOfFrequency } from './steady-state';
 
 /** A linear form of the unknowns: Σ coefficient · unknown. An unknown of −1 is the reference node's voltage, 0. */
 export interface LinearForm {
@@ -271,11 +271,6 @@ export class ResponseOperator {
     return undefined;
   }
 
-  /** The index of a node by its name, or a problem. */
-  nodeOf(name: string): number | Problem {
-    return this.network.nodeIndex.get(name) ?? problem('invalid', [], [], `There is no node ${name} in the element list.`);
-  }
-
   private now(): Prepared {
     if (this.current === undefined) throw new Error('no frequency is prepared');
     return this.current;
@@ -425,10 +420,5 @@ function clean({ re, im }: ExtendedVector, scale: Float64Array): void {
     re[at] = 0;
     im[at] = 0;
   }
-}
-
-/** Narrows to a problem. */
-export function isProblem(value: unknown): value is Problem {
-  return typeof value === 'object' && value !== null && 'ok' in value && value.ok === false;
 }
 

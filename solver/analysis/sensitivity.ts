@@ -1,28 +1,26 @@
 import type { ElementList } from '../elements/element-list';
 import { ExtendedVector } from '../linear/extended';
+import { faultOfFrequency } from './frequency';
+import type { Network } from './network';
 import { rowOf } from './network';
+import type { NetworkReading, Phasor } from './network-reading';
+import { portNamed, resolveReading, sourceNamed } from './network-reading';
 import type { Problem } from './problem';
-import { problem } from './problem';
+import { isProblem, problem } from './problem';
 import { ProblemPlaces } from './problem-places';
 import { BY_ADMITTANCE, BY_BRANCH, BY_SOURCE } from './response-layout';
 import type { LinearForm } from './response-operator';
-import { isProblem, ResponseOperator } from './response-operator';
-import { faultOfFrequency } from './steady-state';
+import { ResponseOperator } from './response-operator';
 import type { SweepProblem } from './sweep';
 import type { Effect, ValueEffects, ValueField } from './value-fields';
 import { valuesOf } from './value-fields';
-
-/** A reading of the network: the voltage of a node over another, or the current of an element's port. */
-export type NetworkReading =
-  | { readonly quantity: 'voltage'; readonly plus: string; readonly minus: string }
-  | { readonly quantity: 'current'; readonly element: string; readonly port?: number };
 
 /** What sensitivities are asked of. */
 export type SensitivityOutput =
   /** As the independent sources make it. */
   | NetworkReading
   /** The impedance between two nodes, sources dead. */
-  | { readonly quantity: 'impedance'; readonly plus: string; readonly minus: string }
+  | { readonly quantity: 'impedance'; readonly nodes: readonly [string, string] }
   /** A reading over what one independent source delivers, the others dead. */
   | { readonly quantity: 'transfer'; readonly source: string; readonly reading: NetworkReading };
 
@@ -80,7 +78,7 @@ export function sensitivity(
     const fault = faultOfFrequency(frequency);
     if (fault !== undefined) return problem('invalid', [], [], fault);
   }
-  const asked = resolve(operator, output);
+  const asked = resolve(operator.network, output);
   if (isProblem(asked)) return asked;
   const { elements, rowStart, laws } = operator.network;
   const values = elements.flatMap((element, place) =>
@@ -152,40 +150,27 @@ function record(
 
 /** An output by numbers: what is read, and what the network is driven by. */
 interface Asked {
-  readonly reading: { readonly plus: number; readonly minus: number } | { readonly row: number };
+  readonly reading: Phasor;
   readonly drive: 'sources' | { readonly plus: number; readonly minus: number } | { readonly source: number };
 }
 
-function resolve(operator: ResponseOperator, output: SensitivityOutput): Asked | Problem {
-  const { network } = operator;
+function resolve(network: Network, output: SensitivityOutput): Asked | Problem {
   switch (output.quantity) {
     case 'impedance': {
-      const plus = operator.nodeOf(output.plus);
-      const minus = operator.nodeOf(output.minus);
-      if (isProblem(plus)) return plus;
-      if (isProblem(minus)) return minus;
-      return { reading: { plus, minus }, drive: { plus, minus } };
+      const pair = portNamed(network, output.nodes);
+      if (isProblem(pair)) return pair;
+      const [one, other] = pair;
+      return { reading: { kind: 'between', one, other }, drive: { plus: one, minus: other } };
     }
     case 'transfer': {
-      const source = rowOf(network, output.source);
-      const law = network.laws[source]?.law;
-      if (law !== 'voltage' && law !== 'current') {
-        return problem('invalid', [], [], `There is no independent source ${output.source} in the element list.`);
-      }
-      const reading = resolve(operator, output.reading);
-      return isProblem(reading) ? reading : { ...reading, drive: { source } };
+      const source = sourceNamed(network, output.source);
+      if (isProblem(source)) return source;
+      const reading = resolveReading(network, output.reading);
+      return isProblem(reading) ? reading : { reading, drive: { source } };
     }
-    case 'voltage': {
-      const plus = operator.nodeOf(output.plus);
-      const minus = operator.nodeOf(output.minus);
-      if (isProblem(plus)) return plus;
-      if (isProblem(minus)) return minus;
-      return { reading: { plus, minus }, drive: 'sources' };
-    }
-    case 'current': {
-      const row = rowOf(network, output.element, output.port ?? 0);
-      if (row < 0) return problem('invalid', [], [], `There is no such port of an element ${output.element} in the element list.`);
-      return { reading: { row }, drive: 'sources' };
+    default: {
+      const reading = resolveReading(network, output);
+      return isProblem(reading) ? reading : { reading, drive: 'sources' };
     }
   }
 }
@@ -207,7 +192,7 @@ class Derivative {
     const { reading, drive } = asked;
     const stuck = operator.prepare(frequency);
     if (stuck !== undefined) return stuck;
-    this.form = 'row' in reading ? operator.currentForm(reading.row) : operator.voltageForm(reading.plus, reading.minus);
+    this.form = reading.kind === 'current' ? operator.currentForm(reading.row) : operator.voltageForm(reading.one, reading.other);
     const found =
       drive === 'sources'
         ? operator.exciteSources(x)
@@ -221,7 +206,7 @@ class Derivative {
   /** H itself. */
   value(): readonly [number, number] {
     const { reading } = this.asked;
-    if ('row' in reading) return this.currentOf(reading.row);
+    if (reading.kind === 'current') return this.currentOf(reading.row);
     return this.operator.valueOf(this.form, this.x);
   }
 
@@ -276,7 +261,7 @@ class Derivative {
     const { operator, x, adjoint, asked } = this;
     const { omega } = operator;
     const isBranch = operator.layout.form[row] === BY_BRANCH;
-    const isReadHere = 'row' in asked.reading && asked.reading.row === row && !isBranch;
+    const isReadHere = asked.reading.kind === 'current' && asked.reading.row === row && !isBranch;
     if (effect.of === 'capacitance') {
       if (omega === 0) return [0, 0];
       if (this.isSensedOpen(row)) return undefined;

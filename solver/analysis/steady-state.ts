@@ -3,6 +3,7 @@ import { ADMITTANCE, GIVEN_CURRENT } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
 import { validateElementList } from '../elements/validate-element-list';
 import { Engine } from './engine';
+import { faultOfFrequency } from './frequency';
 import { REFERENCE, rowOf } from './network';
 import type { Problem } from './problem';
 import { problem } from './problem';
@@ -12,13 +13,6 @@ import { residualOf } from './residual';
 export interface SolveOptions {
   /** The operating frequency, hertz; 0 is allowed. */
   readonly frequency: number;
-}
-
-/** The fault of a frequency, in words, or undefined. */
-export function faultOfFrequency(frequency: unknown): string | undefined {
-  if (typeof frequency !== 'number' || !Number.isFinite(frequency))
-    return 'The frequency must be a finite number of hertz.';
-  return frequency < 0 ? 'The frequency must not be negative.' : undefined;
 }
 
 /**

@@ -2,10 +2,11 @@ import { Complex } from 'complex.js';
 import type { Element, ElementList } from '../elements/element-list';
 import { sameFrequency } from '../elements/source-value';
 import { validateElementList } from '../elements/validate-element-list';
+import { faultOfFrequency } from './frequency';
 import type { Problem } from './problem';
 import { problem } from './problem';
 import type { Solution } from './solution';
-import { faultOfFrequency, solve } from './steady-state';
+import { solve } from './steady-state';
 
 export interface SuperpositionOptions {
   /** Hertz; what a source without a frequency of its own delivers at. */

@@ -1,8 +1,9 @@
 import type { ElementList } from '../elements/element-list';
 import { Engine } from './engine';
 import type { Network } from './network';
+import type { Phasor } from './network-reading';
 import type { Problem } from './problem';
-import type { Output, Phasor, Transfer } from './sweep-output';
+import type { Output, Transfer } from './sweep-output';
 
 /** A value, or undefined where it is not determined. */
 export type Found = { readonly re: number; readonly im: number } | undefined;

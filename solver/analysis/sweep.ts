@@ -6,14 +6,14 @@ import { shapeOf } from '../tape/network-inputs';
 import type { SweepTape } from '../tape/sweep-tape';
 import { compileSweep } from '../tape/sweep-tape';
 import { LEVEL } from '../tape/tape-builder';
+import { faultOfFrequency } from './frequency';
 import type { Network } from './network';
 import { toNetwork } from './network';
 import type { Problem } from './problem';
-import { problem } from './problem';
-import { faultOfFrequency } from './steady-state';
+import { isProblem, problem } from './problem';
 import { ExactSweep } from './sweep-exact';
 import type { Output, SweepOutput } from './sweep-output';
-import { isProblem, resolveOutput } from './sweep-output';
+import { resolveOutput } from './sweep-output';
 
 export interface SweepOptions {
   /** The operating frequencies, hertz, in any order. */

@@ -1,10 +1,11 @@
 import type { ElementList, Impedance } from '../elements/element-list';
 import { ExtendedVector } from '../linear/extended';
+import { faultOfFrequency } from './frequency';
+import { portNamed } from './network-reading';
 import type { Problem } from './problem';
-import { problem } from './problem';
+import { isProblem, problem } from './problem';
 import { ProblemPlaces } from './problem-places';
-import { isProblem, ResponseOperator } from './response-operator';
-import { faultOfFrequency } from './steady-state';
+import { ResponseOperator } from './response-operator';
 import type { SweepProblem } from './sweep';
 import type { PortReferences, TwoPortKind, TwoPortMatrix } from './two-port-parameters';
 import { fromPortSolutions, newMatrix, newPortSolutions } from './two-port-parameters';
@@ -63,13 +64,9 @@ export function twoPort(
   // Asked of the network as given first, so that no name of what is added to it stands in a message.
   const plain = ResponseOperator.of(list);
   if (isProblem(plain)) return plain;
-  for (const node of ports.flat()) {
-    const at = plain.nodeOf(node);
-    if (isProblem(at)) return at;
-  }
-  const same = ports.find(([first, second]) => first === second);
-  if (same !== undefined) {
-    return problem('invalid', [], [same[0]], `A port has both ends at node ${same[0]}; choose two different nodes.`);
+  for (const port of ports) {
+    const nodes = portNamed(plain.network, port);
+    if (isProblem(nodes)) return nodes;
   }
   const operator = ResponseOperator.of(terminated(list, ports, references));
   if (isProblem(operator)) return operator;

@@ -3,7 +3,7 @@
  * transfer function, a measurement that is interpolated) is nobody's business here; it has to be smooth between its
  * poles and zeros, and the same each time.
  */
-export interface Response {
+export interface ResponseFunction {
   /** The value at a frequency in hertz; undefined where there is none, as at a resonance without losses. */
   readonly evaluate: (frequency: number) => { readonly re: number; readonly im: number } | undefined;
   /** The values at many frequencies at once, where that is cheaper; `determined` is 0 where there is none. */

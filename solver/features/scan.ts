@@ -1,7 +1,7 @@
 import type { Problem } from '../analysis/problem';
 import { problem } from '../analysis/problem';
 import type { Hint } from './hints';
-import type { Band, Response } from './response';
+import type { Band, ResponseFunction } from './response';
 
 export interface ScanOptions extends Band {
   /** Points of the grid in a decade, before it is made finer where the response asks for it; 60 if not given. */
@@ -18,7 +18,7 @@ export interface ScanOptions extends Band {
 export interface Scan {
   readonly ok: true;
   readonly band: Band;
-  readonly response: Response;
+  readonly response: ResponseFunction;
   /** Hertz, rising. Frequencies without a value are left out. */
   readonly frequencies: Float64Array;
   readonly re: Float64Array;
@@ -34,7 +34,7 @@ const TURN = 40;
 const COS_TURN = Math.cos((TURN * Math.PI) / 180);
 
 /** Evaluates a response over a band, more closely where it needs it. Costs the grid and some points a resonance. */
-export function scanResponse(response: Response, options: ScanOptions): Scan | Problem {
+export function scanResponse(response: ResponseFunction, options: ScanOptions): Scan | Problem {
   const { low, high, perDecade = PER_DECADE, hints = [] } = options;
   if (!(low > 0) || !(high > low) || !Number.isFinite(high)) {
     return problem('invalid', [], [], 'A band needs a lower frequency above 0 Hz and a higher one above that. Give two such frequencies.');
@@ -94,7 +94,7 @@ function startingGrid(low: number, high: number, perDecade: number, hints: reado
   return Float64Array.from([...new Set(grid.filter((f) => f >= low && f <= high))].sort((a, b) => a - b));
 }
 
-function evaluated(response: Response, frequencies: Float64Array): Point[] {
+function evaluated(response: ResponseFunction, frequencies: Float64Array): Point[] {
   if (response.evaluateAll !== undefined) {
     const { re, im, determined } = response.evaluateAll(frequencies);
     return Array.from(frequencies).flatMap((frequency, k) => (determined[k] === 1 ? finite({ frequency, re: re[k] ?? 0, im: im[k] ?? 0 }) : []));

@@ -1,5 +1,6 @@
 import type { Network } from '../analysis/network';
-import type { Output, Phasor, Transfer } from '../analysis/sweep-output';
+import type { Phasor } from '../analysis/network-reading';
+import type { Output, Transfer } from '../analysis/sweep-output';
 import type { Law } from '../elements/law';
 import { NetworkInputs } from './network-inputs';
 import type { Drive, DriveReadings, Probe } from './nodal-tape';

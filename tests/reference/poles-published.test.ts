@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { network } from '../solver/support/networks';
 import { found } from '../solver/support/roots';
-import type { PolesAndZeros, TransferOutput } from '@/solver/analysis/poles-and-zeros';
+import type { NetworkReading } from '@/solver/analysis/network-reading';
+import type { PolesAndZeros } from '@/solver/analysis/poles-and-zeros';
 import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
 import { figuresOf } from './support/describe-figure';
 import { expectPrinted } from './support/expect-figure';
@@ -12,8 +13,8 @@ function rootsOf({ elements }: Circuit, { source, output }: RootsFigure | Resona
   return found(polesAndZeros(network(...elements), { kind: 'transfer', source, output: outputOf(output) }));
 }
 
-function outputOf(output: Output): TransferOutput {
-  if (output.of === 'voltage') return { quantity: 'voltage', node: output.node, over: output.over };
+function outputOf(output: Output): NetworkReading {
+  if (output.of === 'voltage') return { quantity: 'voltageBetween', nodes: [output.node, output.over ?? '0'] };
   if (output.of === 'current') return { quantity: 'current', element: output.element };
   throw new Error(`no transfer to a ${output.of}`);
 }

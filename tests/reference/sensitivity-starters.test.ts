@@ -13,7 +13,7 @@ describe('ST-01, a loaded first-order low-pass, at 10 kHz', () => {
     capacitor('C', 'out', '0', 3.3e-9),
     resistor('RL', 'out', '0', 100e3),
   );
-  const result = sensitivity(list, { quantity: 'transfer', source: 'V', reading: { quantity: 'voltage', plus: 'out', minus: '0' } }, [10e3]);
+  const result = sensitivity(list, { quantity: 'transfer', source: 'V', reading: { quantity: 'voltage', node: 'out' } }, [10e3]);
   if (!result.ok) throw new Error(result.message);
 
   it('has H = 0.657034 at −46.2227°', () => {
@@ -55,7 +55,7 @@ describe('ST-08, a multiple-feedback low-pass: Σ_L S + Σ_C S = ∂ln H/∂ln �
     [1e-3, '216.30'],
     [500, '211.88'],
   ])('at %s Hz the group delay is %s µs', (frequency, printed) => {
-    const result = sensitivity(list, { quantity: 'voltage', plus: 'out', minus: '0' }, [frequency]);
+    const result = sensitivity(list, { quantity: 'voltage', node: 'out' }, [frequency]);
     if (!result.ok) throw new Error(result.message);
     const sum = result.traces.reduce((total, { field, relativeIm }) => total + (field === 'capacitance' ? (relativeIm[0] ?? NaN) : 0), 0);
     expectPrinted((-sum / (2 * Math.PI * frequency)) * 1e6, { printed });

@@ -5,7 +5,7 @@ import { extremesOf, rangeOver } from '@/solver/features/extremes';
 import { loopMargins } from '@/solver/features/loop-margins';
 import { notchesOf, passBand, rejectionOver, rippleOver } from '@/solver/features/pass-band';
 import { realCrossings, realExtremes } from '@/solver/features/real-curve';
-import type { Response } from '@/solver/features/response';
+import type { ResponseFunction } from '@/solver/features/response';
 import { decibels, HALF_POWER_DECIBELS } from '@/solver/features/response';
 import type { Scan, ScanOptions } from '@/solver/features/scan';
 import { scanResponse } from '@/solver/features/scan';
@@ -30,18 +30,18 @@ function times(a: Complex, b: Complex): Complex {
 
 const ONE: Complex = { re: 1, im: 0 };
 
-function response(evaluate: (f: number) => Complex | undefined): Response {
+function response(evaluate: (f: number) => Complex | undefined): ResponseFunction {
   return { evaluate };
 }
 
-function scanned(of: Response, options: ScanOptions): Scan {
+function scanned(of: ResponseFunction, options: ScanOptions): Scan {
   const scan = scanResponse(of, options);
   if (!scan.ok) throw new Error(scan.message);
   return scan;
 }
 
 /** 1/(1 + jQ(f/f0 − f0/f)). */
-function resonance(f0: number, q: number): Response {
+function resonance(f0: number, q: number): ResponseFunction {
   return response((f) => over(ONE, { re: 1, im: (q * (f - f0) * (f + f0)) / (f * f0) }));
 }
 
@@ -143,7 +143,7 @@ describe('a notch', () => {
 });
 
 /** Chebyshev by its poles: |H|² = 1/(1 + ε²T_n²). */
-function chebyshev(n: number, ripple: number): Response {
+function chebyshev(n: number, ripple: number): ResponseFunction {
   const epsilon = Math.sqrt(10 ** (ripple / 10) - 1);
   const a = Math.asinh(1 / epsilon) / n;
   return response((w) => {
@@ -236,7 +236,7 @@ describe('an all-pass', () => {
 });
 
 describe('the margins of a loop', () => {
-  const loop = (gain: number): Response =>
+  const loop = (gain: number): ResponseFunction =>
     response((w) => over({ re: gain, im: 0 }, times({ re: 0, im: w }, times({ re: 1, im: w }, { re: 2, im: w }))));
   it('K/(s(s + 1)(s + 2)) with K = √10: arctan ⅓ at 1 rad/s, and 20 lg(6/√10) at √2', () => {
     const margins = loopMargins(scanned(loop(Math.sqrt(10)), { low: 1e-2, high: 1e2 }));
@@ -289,7 +289,7 @@ describe('a scan', () => {
   it('evaluates many at once where it can, with the same outcome', () => {
     const single = resonance(1000, 50);
     let calls = 0;
-    const many: Response = {
+    const many: ResponseFunction = {
       ...single,
       evaluateAll: (frequencies) => {
         calls++;

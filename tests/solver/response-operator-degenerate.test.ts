@@ -74,9 +74,9 @@ describe('the analyses of a network, whatever it is', () => {
       const results = [
         two,
         ...(two.ok ? (['impedance', 'admittance', 'hybrid', 'inverseHybrid', 'chain', 'scattering'] as const).map((kind) => ({ ok: true, ...two.parameters(kind) })) : []),
-        sensitivity(list, { quantity: 'voltage', plus: '1', minus: '2' }, frequencies),
+        sensitivity(list, { quantity: 'voltageBetween', nodes: ['1', '2'] }, frequencies),
         sensitivity(list, { quantity: 'current', element: 'first' }, frequencies),
-        sensitivity(list, { quantity: 'impedance', plus: '1', minus: '0' }, frequencies),
+        sensitivity(list, { quantity: 'impedance', nodes: ['1', '0'] }, frequencies),
         noise(list, ['1', '2'], { frequencies }),
         ...[0, 1].flatMap((frequency) => [equivalent(list, ['1', '2'], frequency), equivalent(list, ['1', '0'], frequency), nodalEquations(list, frequency)]),
       ];

@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import type { ElementList, Problem } from '@/solver';
 import { ExtendedVector } from '@/solver/linear/extended';
-import { isProblem, ResponseOperator } from '@/solver/analysis/response-operator';
+import { nodeNamed } from '@/solver/analysis/network-reading';
+import { isProblem } from '@/solver/analysis/problem';
+import { ResponseOperator } from '@/solver/analysis/response-operator';
 import { solveExactly } from '../reference/support/exact-solver';
 import { unitsOff } from './support/exact-units';
 import { randomLinearNetwork } from './support/linear-networks';
@@ -31,7 +33,7 @@ function fine(result: Problem | undefined): void {
 }
 
 function node(operator: ResponseOperator, name: string): number {
-  const at = operator.nodeOf(name);
+  const at = nodeNamed(operator.network, name);
   if (isProblem(at)) throw new Error(at.message);
   return at;
 }

@@ -51,10 +51,10 @@ describe('sensitivity', () => {
       const frequency = 10 ** random.between(0, 5);
       const element = random.pick(list.elements.filter(({ kind }) => kind !== 'operationalAmplifier')).id;
       const output = random.pick<SensitivityOutput>([
-        { quantity: 'voltage', plus: '1', minus: '2' },
+        { quantity: 'voltageBetween', nodes: ['1', '2'] },
         { quantity: 'current', element },
-        { quantity: 'impedance', plus: '2', minus: '3' },
-        { quantity: 'transfer', source: 'E', reading: { quantity: 'voltage', plus: '2', minus: '0' } },
+        { quantity: 'impedance', nodes: ['2', '3'] },
+        { quantity: 'transfer', source: 'E', reading: { quantity: 'voltage', node: '2' } },
         { quantity: 'transfer', source: 'E', reading: { quantity: 'current', element } },
       ]);
       const { traces, re, im } = found(live, output, frequency);
@@ -96,7 +96,7 @@ describe('sensitivity', () => {
       resistor('R2', 'c', '0', 20),
       resistor('R3', 'd', '0', 30),
     );
-    const output = { quantity: 'voltage', plus: 'd', minus: 'c' } as const;
+    const output = { quantity: 'voltageBetween', nodes: ['d', 'c'] } as const;
     const { traces } = found(list, output, 1000);
     expect(traces.map(({ element, field, index }) => [element, field, index])).toEqual([
       ['R1', 'resistance', undefined],
@@ -130,7 +130,7 @@ describe('sensitivity', () => {
     for (let round = 0; round < 40; round++) {
       const list = randomLinearNetwork(random, { nodes: 4, elements: 8, decades: 3, without: ['impedance', 'twoPort', 'voltageSource', 'currentSource'] });
       const live = network(...list.elements, voltageSource('E', 'live', '0', 1), resistor('Re', 'live', '3', 1e3));
-      const { traces } = found(live, { quantity: 'voltage', plus: '3', minus: '1' }, 10 ** random.between(0, 5));
+      const { traces } = found(live, { quantity: 'voltageBetween', nodes: ['3', '1'] }, 10 ** random.between(0, 5));
       const impedances = { resistance: 1, inductance: 1, inductances: 1, transresistance: 1, outputResistance: 1, impedance: 1, capacitance: -1, transconductance: -1 };
       const scale = traces.reduce((total, { relativeRe, relativeIm }) => total + Math.hypot(relativeRe[0] ?? 0, relativeIm[0] ?? 0), 0);
       expect(Math.hypot(...sum(traces, impedances))).toBeLessThanOrEqual(32 * Number.EPSILON * (1 + scale));
@@ -146,7 +146,7 @@ describe('sensitivity', () => {
       capacitor('C2', 'b', '0', 82e-9),
       resistor('RL', 'b', '0', 600),
     );
-    const output = { quantity: 'voltage', plus: 'b', minus: '0' } as const;
+    const output = { quantity: 'voltage', node: 'b' } as const;
     const f = 2500;
     const total = sum(found(list, output, f).traces, { capacitance: 1, inductance: 1 });
     // H(f) is the same as H with all times scaled, so the slope comes of the frequency itself, by differences.
@@ -163,14 +163,14 @@ describe('sensitivity', () => {
 
   it('is known where a value is zero, and at 0 Hz', () => {
     const divider = network(voltageSource('E', 'a', '0', 10), resistor('R0', 'a', 'b', 0), resistor('R1', 'b', 'c', 1), resistor('R2', 'c', '0', 1), capacitor('C0', 'c', '0', 0), inductor('L', 'c', 'd', 1), resistor('R3', 'd', '0', 2));
-    const at0 = found(divider, { quantity: 'voltage', plus: 'c', minus: '0' }, 0);
+    const at0 = found(divider, { quantity: 'voltage', node: 'c' }, 0);
     const of = (from: Sensitivity, id: string) => from.traces.find(({ element }) => element === id);
     // H = 10·g/(R0 + R1 + g) with g = R2 ‖ R3 = 2/3: ∂H/∂R0 = −10·g/(5/3)².
     expect(of(at0, 'R0')?.re[0]).toBeCloseTo(-2.4, 14);
     expect(of(at0, 'R0')?.relativeRe[0]).toBe(0);
     expect([of(at0, 'C0')?.re[0], of(at0, 'L')?.re[0], of(at0, 'L')?.im[0]]).toEqual([0, 0, 0]);
     const f = 1 / (2 * Math.PI);
-    const at1 = found(divider, { quantity: 'voltage', plus: 'c', minus: '0' }, f);
+    const at1 = found(divider, { quantity: 'voltage', node: 'c' }, f);
     // 1 Ω above, Y = 1 + 1/(2 + j) below: ∂H/∂C = −jω·H²/10.
     const [re, im] = [at1.re[0] ?? NaN, at1.im[0] ?? NaN];
     expect(of(at1, 'C0')?.re[0]).toBeCloseTo((2 * re * im) / 10, 13);
@@ -188,10 +188,10 @@ describe('sensitivity', () => {
       const result = sensitivity(list, output, [1]);
       return result.ok ? undefined : result.message;
     };
-    expect(message({ quantity: 'voltage', plus: 'x', minus: '0' })).toMatch(/no node x/);
-    expect(message({ quantity: 'current', element: 'R', port: 1 })).toMatch(/no such port/);
-    expect(message({ quantity: 'transfer', source: 'R', reading: { quantity: 'current', element: 'R' } })).toMatch(/no independent source R/);
-    const partly = sensitivity(list, { quantity: 'voltage', plus: 'c', minus: '0' }, [0, 1]);
+    expect(message({ quantity: 'voltage', node: 'x' })).toMatch(/no node x/);
+    expect(message({ quantity: 'current', element: 'R', port: 1 })).toMatch(/R has no port 1/);
+    expect(message({ quantity: 'transfer', source: 'R', reading: { quantity: 'current', element: 'R' } })).toMatch(/R is not an independent source/);
+    const partly = sensitivity(list, { quantity: 'voltage', node: 'c' }, [0, 1]);
     if (!partly.ok) throw new Error(partly.message);
     expect([...partly.determined]).toEqual([0, 1]);
     expect(partly.problems).toEqual([{ at: [0], problem: expect.objectContaining({ kind: 'floatingNode', nodes: ['c'] }) as unknown }]);

@@ -143,6 +143,6 @@ describe('twoPort', () => {
     expect(asked(PORTS, 0, 1)).toMatch(/reference resistance/);
     expect(asked(PORTS, 50, -1)).toMatch(/negative/);
     expect(asked([['1', '0'], ['x', '0']], 50, 1)).toMatch(/no node x/);
-    expect(asked([['1', '1'], ['2', '0']], 50, 1)).toMatch(/both ends at node 1/);
+    expect(asked([['1', '1'], ['2', '0']], 50, 1)).toMatch(/Both nodes are 1/);
   });
 });

@@ -15,7 +15,7 @@ export function refused(result: { readonly ok: true } | Problem): Problem {
 
 /** The voltage of a node, over another or the reference, from a source. */
 export function toNode(node: string, source = 'V1', over?: string): Transfer {
-  return { kind: 'transfer', source, output: { quantity: 'voltage', node, over } };
+  return { kind: 'transfer', source, output: over === undefined ? { quantity: 'voltage', node } : { quantity: 'voltageBetween', nodes: [node, over] } };
 }
 
 /** An ideal one. */
