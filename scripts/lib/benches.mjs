@@ -23,6 +23,9 @@ const command = 'npm run bench';
 /** The area that has a figure which is measured here, since only the set-up can start itself a second time. */
 const startArea = 'app';
 
+/** Areas that need no browser, no server and no database: what they measure runs in their own process. */
+const bareAreas = new Set(['engine']);
+
 /**
  * Measures the named areas, or all, and prints their figures. It judges none of them.
  *
@@ -42,10 +45,12 @@ export async function runBenches({ areas, json }) {
 
   const settings = readSettings();
   const layout = layoutOf(path.join(settings.stateDir, 'bench'));
+  const served = chosen.filter((area) => !bareAreas.has(area));
   await claimState(layout, command);
   requireSpace(layout);
-  await install({ programs: settings.databaseUrl === null ? [mariadb, chromium] : [chromium], layout, command });
-  await ensureBuild({ command, logs: layout.logs, serve: true });
+  const programs = settings.databaseUrl === null ? [mariadb, chromium] : [chromium];
+  await install({ programs: served.length === 0 ? [] : programs, layout, command });
+  if (served.length > 0) await ensureBuild({ command, logs: layout.logs, serve: true });
   const { NODE_ENV: _mode, NEXTAUTH_URL: _url, NEXTAUTH_SECRET: _secret, ...env } = settings.env;
 
   /** @type {Figure[]} */
@@ -70,12 +75,18 @@ export async function runBenches({ areas, json }) {
     if (value !== null) note({ area: startArea, name: 'start.second.s', value, unit: 's' });
   }
 
-  const { testUrl } = await openDatabase({ givenUrl: settings.databaseUrl, layout, preferredPort: firstPort.bench });
-  const { baseUrl, application } = await serveTestDatabase({ layout, env, testUrl, preferredPort: 3300 });
-  const benchEnvironment = { ...application, BASE_URL: baseUrl, OHMSTEAD_STATE: layout.dir };
-  for (const area of chosen.filter((name) => existsSync(fileOf(name)))) {
-    const code = await step(`Measuring ${area}`, () => measure(area, benchEnvironment, note), () => `Measured ${area}`);
+  /** @param {string} area @param {Readonly<Record<string, string | undefined>>} environment */
+  const measureArea = async (area, environment) => {
+    if (!existsSync(fileOf(area))) return;
+    const code = await step(`Measuring ${area}`, () => measure(area, environment, note), () => `Measured ${area}`);
     if (code !== 0) troubles.push(`${area}: the bench ended with code ${code ?? 'none'}; its figures may be incomplete`);
+  };
+  // Before there is a server beside them to share the processor with.
+  for (const area of chosen.filter((name) => bareAreas.has(name))) await measureArea(area, env);
+  if (served.length > 0) {
+    const { testUrl } = await openDatabase({ givenUrl: settings.databaseUrl, layout, preferredPort: firstPort.bench });
+    const { baseUrl, application } = await serveTestDatabase({ layout, env, testUrl, preferredPort: 3300 });
+    for (const area of served) await measureArea(area, { ...application, BASE_URL: baseUrl, OHMSTEAD_STATE: layout.dir });
   }
 
   if (!json) for (const line of ['', ...figureTable(figures)]) say(line);

@@ -60,11 +60,18 @@ export function sweep(list: ElementList, options: SweepOptions): Sweep | Problem
 /** A network analysed for outputs, to be run again and again. */
 export interface PreparedSweep {
   readonly ok: true;
+  /** Runs over frequencies, hertz. */
+  run(frequencies: ArrayLike<number>, options?: RunOptions): Sweep | Problem;
+}
+
+export interface RunOptions {
   /**
-   * Runs over frequencies, hertz. With `list`, for other values of the same elements between the same nodes: nothing is
-   * analysed again unless a value comes to be zero or a source comes to be real.
+   * Other values of the same elements between the same nodes. Nothing is analysed again unless a value comes to be zero,
+   * or the phase of a source to be a whole number of quarter turns.
    */
-  run(frequencies: ArrayLike<number>, list?: ElementList): Sweep | Problem;
+  readonly list?: ElementList;
+  /** A sweep of this handle over as many frequencies that is no longer wanted: its arrays are written over and given back. */
+  readonly reuse?: Sweep;
 }
 
 /** Analyses a network for outputs; a `Problem` where the request is faulty. */
@@ -81,7 +88,7 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
   let compiled = compile(network, resolved);
   return {
     ok: true,
-    run(frequencies, changed) {
+    run(frequencies, { list: changed, reuse } = {}) {
       let current = checked.list;
       let { laws } = network;
       if (changed !== undefined) {
@@ -95,7 +102,7 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
         ({ laws } = other);
         if (shapeOf(laws) !== compiled.shape) compiled = compile(other, resolved);
       }
-      return runPrepared(current, laws, compiled.tape, resolved, outputs, frequencies);
+      return runPrepared(current, laws, compiled.tape, resolved, outputs, frequencies, reuse);
     },
   };
 }
@@ -126,19 +133,14 @@ function runPrepared(
   outputs: readonly Output[],
   asked: readonly SweepOutput[],
   given: ArrayLike<number>,
+  reuse: Sweep | undefined,
 ): Sweep | Problem {
-  const frequencies = Float64Array.from(given);
-  for (const frequency of frequencies) {
-    const fault = faultOfFrequency(frequency);
+  const { frequencies, traces } = roomIn(reuse, given, asked) ?? roomFor(given, asked);
+  for (let place = 0; place < frequencies.length; place++) {
+    const fault = faultOfFrequency(frequencies[place]);
     if (fault !== undefined) return problem('invalid', [], [], fault);
   }
   const count = frequencies.length;
-  const traces = asked.map((output): SweepTrace => ({
-    output,
-    re: new Float64Array(count),
-    im: new Float64Array(count),
-    determined: new Uint8Array(count).fill(1),
-  }));
   const doubtful = new Uint8Array(count);
   if (tape === undefined) doubtful.fill(1);
   else runOverFrequencies(tape, laws, frequencies, traces, doubtful);
@@ -163,6 +165,42 @@ function runPrepared(
   const isDetermined = traces.some(({ determined }) => determined.includes(1));
   if (worst !== undefined && traces.length > 0 && !isDetermined) return worst.problem;
   return { ok: true, frequencies, traces, problems: [...problems.values()] };
+}
+
+/** The arrays of a sweep that is no longer wanted, if they are of the right size. */
+function roomIn(
+  reuse: Sweep | undefined,
+  given: ArrayLike<number>,
+  asked: readonly SweepOutput[],
+): Pick<Sweep, 'frequencies' | 'traces'> | undefined {
+  if (reuse === undefined || reuse.frequencies.length !== given.length) return undefined;
+  if (reuse.traces.length !== asked.length || reuse.traces.some(({ output }, place) => output !== asked[place])) return undefined;
+  reuse.frequencies.set(given);
+  for (const { re, im, determined } of reuse.traces) {
+    // A part that is nothing at all frequencies is not written.
+    re.fill(0);
+    im.fill(0);
+    determined.fill(1);
+  }
+  return reuse;
+}
+
+/** The arrays of a sweep, in one piece of memory: to ask for many takes longer than to fill them. */
+function roomFor(given: ArrayLike<number>, asked: readonly SweepOutput[]): { frequencies: Float64Array; traces: SweepTrace[] } {
+  const count = given.length;
+  const numbers = new Float64Array(count * (1 + 2 * asked.length));
+  const flags = new Uint8Array(count * asked.length).fill(1);
+  numbers.set(given);
+  const traces = asked.map((output, place): SweepTrace => {
+    const start = count * (1 + 2 * place);
+    return {
+      output,
+      re: numbers.subarray(start, start + count),
+      im: numbers.subarray(start + count, start + 2 * count),
+      determined: flags.subarray(count * place, count * (place + 1)),
+    };
+  });
+  return { frequencies: numbers.subarray(0, count), traces };
 }
 
 /** The same problem at several frequencies is one, with its places; a resonance names its frequency and stays apart. */

@@ -1,5 +1,6 @@
 import { sameFrequency } from '../elements/source-value';
 import type { Law } from '../elements/law';
+import type { ScalarInput } from './network-inputs';
 import type { Part, Value } from './tape-builder';
 import { LEVEL, NOTHING } from './tape-builder';
 import type { TapeMachine } from './tape-machine';
@@ -14,9 +15,11 @@ const WATCH_LIMIT = 1.6e5;
 const SMALLEST = 1e-75;
 const LARGEST = 1e75;
 
-/** A block's lanes: so many that its work stays in cache. */
-const MOST_LANES = 64;
-const CACHED_NUMBERS = 20_000;
+/** A block's lanes: fewer where rows of so many would take more than some megabytes. */
+const MOST_LANES = 72;
+const MOST_NUMBERS = 1_500_000;
+
+const WATCHED = [LEVEL.constant, LEVEL.block, LEVEL.varying];
 
 /** Where an output goes: one number a frequency. */
 export interface OutputArrays {
@@ -24,10 +27,11 @@ export interface OutputArrays {
   readonly im: Float64Array;
 }
 
-/** The number of lanes at which a program's rows fit the cache. */
-export function lanesFor(slotCount: number, most = MOST_LANES): number {
-  const fitting = Math.floor(CACHED_NUMBERS / slotCount / LANE_STEP) * LANE_STEP;
-  return Math.max(LANE_STEP, Math.min(most, fitting));
+/** How many lanes to run a program on for so many points: few blocks, and little of the last one idle. */
+export function lanesFor(slotCount: number, points: number): number {
+  const fitting = Math.max(LANE_STEP, Math.min(MOST_LANES, Math.floor(MOST_NUMBERS / slotCount / LANE_STEP) * LANE_STEP));
+  const blocks = Math.max(1, Math.ceil(points / fitting));
+  return Math.max(LANE_STEP, Math.ceil(points / blocks / LANE_STEP) * LANE_STEP);
 }
 
 /**
@@ -46,7 +50,7 @@ export function runOverFrequencies(
   const count = frequencies.length;
   const range = trustedRange(laws);
   const own = ownFrequencies(laws);
-  const lanes = lanesFor(program.slotCount, Math.max(LANE_STEP, Math.ceil(Math.min(count, MOST_LANES) / LANE_STEP) * LANE_STEP));
+  const lanes = lanesFor(program.slotCount, count);
   const memory = machine.load(program, lanes);
   const at = (part: Part): number => program.slotOf(part) * lanes;
   for (const { part, row, read } of inputs.scalars) {
@@ -61,39 +65,145 @@ export function runOverFrequencies(
   machine.run(LEVEL.constant);
   machine.run(LEVEL.block);
   const omega = at(inputs.omega);
-  const watches = [LEVEL.constant, LEVEL.block, LEVEL.varying].map((level) => watchSlot(level) * lanes);
+  const [constantWatch = 0, blockWatch = 0, watch = 0] = WATCHED.map((level) => watchSlot(level) * lanes);
   const outputs = values.map((value) => readerOf(value, at));
+  markOutside(frequencies, range, doubtful);
+  const limit = WATCH_LIMIT - (memory[constantWatch] ?? 0) - (memory[blockWatch] ?? 0);
   for (let start = 0; start < count; start += lanes) {
     const used = Math.min(lanes, count - start);
-    for (let lane = 0; lane < lanes; lane++) {
-      // Lanes beyond the last frequency do its work again.
-      const frequency = frequencies[start + Math.min(lane, used - 1)] ?? 0;
-      if (omega >= 0) memory[omega + lane] = 2 * Math.PI * frequency;
-      if (lane < used && !(frequency >= range.low && frequency <= range.high)) doubtful[start + lane] = 1;
-      for (const { re, im, table } of functions) {
-        const value = table?.(frequency);
+    if (omega >= 0) fillOmega(memory, omega, lanes, frequencies, start, used);
+    for (const { re, im, table } of functions) {
+      for (let lane = 0; lane < lanes; lane++) {
+        const value = table?.(frequencies[start + Math.min(lane, used - 1)] ?? 0);
         if (value === undefined && lane < used) doubtful[start + lane] = 1;
         if (re >= 0) memory[re + lane] = value?.[0] ?? 1;
         if (im >= 0) memory[im + lane] = value?.[1] ?? 1;
       }
     }
     machine.run(LEVEL.varying);
-    for (let lane = 0; lane < used; lane++) {
-      const watch =
-        (memory[watches[0] ?? 0] ?? 0) + (memory[watches[1] ?? 0] ?? 0) + (memory[(watches[2] ?? 0) + lane] ?? 0);
-      if (!(watch < WATCH_LIMIT)) doubtful[start + lane] = 1;
-    }
-    for (const [place, { re, im, signRe, signIm }] of outputs.entries()) {
+    markWatched(memory, watch, limit, used, doubtful, start);
+    for (let place = 0; place < outputs.length; place++) {
+      const output = outputs[place];
       const array = arrays[place];
-      if (array === undefined) continue;
-      copyLanes(memory, re, signRe, array.re, start, used, doubtful);
-      copyLanes(memory, im, signIm, array.im, start, used, doubtful);
+      if (output === undefined || array === undefined) continue;
+      copyLanes(memory, output.re, output.signRe, array.re, start, used, doubtful);
+      copyLanes(memory, output.im, output.signIm, array.im, start, used, doubtful);
     }
   }
   if (own.length === 0) return;
   for (const [place, frequency] of frequencies.entries()) {
     if (own.some((live) => sameFrequency(live, frequency))) doubtful[place] = 1;
   }
+}
+
+/** The laws of the rows that differ from sample to sample: a row's number in each sample, by the input that reads it. */
+export interface Samples {
+  readonly count: number;
+  /** The numbers of an input over the samples; undefined for one that is the same in all. */
+  readonly numbersOf: (input: ScalarInput) => ArrayLike<number> | undefined;
+}
+
+/**
+ * Runs a tape over samples of element values, a block of samples at a time, each at all frequencies: what does not depend
+ * on the frequency is done once a block. Values and doubts are written at frequency·samples + sample.
+ */
+export function runOverSamples(
+  { program, inputs, values }: SweepTape,
+  laws: readonly Law[],
+  frequencies: Float64Array,
+  samples: Samples,
+  arrays: readonly OutputArrays[],
+  doubtful: Uint8Array,
+  machine: TapeMachine = tapeMachine(),
+): void {
+  const { count } = samples;
+  const lanes = lanesFor(program.slotCount, count);
+  const memory = machine.load(program, lanes);
+  const at = (part: Part): number => program.slotOf(part) * lanes;
+  const own = ownFrequencies(laws);
+  const varied: { readonly start: number; readonly numbers: ArrayLike<number> }[] = [];
+  for (const input of inputs.scalars) {
+    const start = at(input.part);
+    const law = laws[input.row];
+    if (start < 0 || law === undefined) continue;
+    const numbers = samples.numbersOf(input);
+    if (numbers === undefined) memory.fill(input.read(law), start, start + lanes);
+    else varied.push({ start, numbers });
+  }
+  const functions = inputs.functions.map(({ value, row, read }) => {
+    const law = laws[row];
+    return { re: at(value.re), im: at(value.im), table: law === undefined ? undefined : read(law) };
+  });
+  machine.run(LEVEL.constant);
+  const omega = at(inputs.omega);
+  const [constantWatch = 0, blockWatch = 0, watch = 0] = WATCHED.map((level) => watchSlot(level) * lanes);
+  const outputs = values.map((value) => readerOf(value, at));
+  const limit = WATCH_LIMIT - (memory[constantWatch] ?? 0);
+  for (let first = 0; first < count; first += lanes) {
+    const used = Math.min(lanes, count - first);
+    for (const { start, numbers } of varied) {
+      for (let lane = 0; lane < lanes; lane++) memory[start + lane] = numbers[first + Math.min(lane, used - 1)] ?? 0;
+    }
+    machine.run(LEVEL.block);
+    for (const [place, frequency] of frequencies.entries()) {
+      if (omega >= 0) memory.fill(2 * Math.PI * frequency, omega, omega + lanes);
+      let isKnown = frequency > 0 && !own.some((live) => sameFrequency(live, frequency));
+      for (const { re, im, table } of functions) {
+        const value = table?.(frequency);
+        isKnown &&= value !== undefined;
+        if (re >= 0) memory.fill(value?.[0] ?? 1, re, re + lanes);
+        if (im >= 0) memory.fill(value?.[1] ?? 1, im, im + lanes);
+      }
+      machine.run(LEVEL.varying);
+      const start = place * count + first;
+      if (isKnown) markBothWatched(memory, watch, blockWatch, limit, used, doubtful, start);
+      else doubtful.fill(1, start, start + used);
+      for (let index = 0; index < outputs.length; index++) {
+        const output = outputs[index];
+        const array = arrays[index];
+        if (output === undefined || array === undefined) continue;
+        copyLanes(memory, output.re, output.signRe, array.re, start, used, doubtful);
+        copyLanes(memory, output.im, output.signIm, array.im, start, used, doubtful);
+      }
+    }
+  }
+}
+
+/** Lanes beyond the last frequency do its work again. */
+function fillOmega(memory: Float64Array, omega: number, lanes: number, frequencies: Float64Array, start: number, used: number): void {
+  for (let lane = 0; lane < used; lane++) memory[omega + lane] = 2 * Math.PI * (frequencies[start + lane] ?? 0);
+  for (let lane = used; lane < lanes; lane++) memory[omega + lane] = memory[omega + used - 1] ?? 0;
+}
+
+function markOutside(frequencies: Float64Array, { low, high }: { low: number; high: number }, doubtful: Uint8Array): void {
+  for (let place = 0; place < frequencies.length; place++) {
+    const frequency = frequencies[place] ?? 0;
+    if (!(frequency >= low && frequency <= high)) doubtful[place] = 1;
+  }
+}
+
+/** Watches are not negative, so while their sum is below the limit each is, and all are numbers; else each is looked at. */
+// prettier-ignore
+function markWatched(
+  memory: Float64Array, watch: number, limit: number, used: number, doubtful: Uint8Array, start: number,
+): void {
+  let [even, odd] = [memory[watch] ?? 0, 0];
+  // With an odd number of lanes the first is taken twice.
+  for (let lane = used & 1; lane < used; lane += 2) {
+    even += memory[watch + lane] ?? 0;
+    odd += memory[watch + lane + 1] ?? 0;
+  }
+  if (even + odd < limit) return;
+  for (let lane = 0; lane < used; lane++) if (!((memory[watch + lane] ?? 0) < limit)) doubtful[start + lane] = 1;
+}
+
+/** The same for a watch and the one of an earlier level, lane by lane. */
+// prettier-ignore
+function markBothWatched(
+  memory: Float64Array, watch: number, earlier: number, limit: number, used: number, doubtful: Uint8Array, start: number,
+): void {
+  markWatched(memory, watch, limit / 2, used, doubtful, start);
+  markWatched(memory, earlier, limit / 2, used, doubtful, start);
 }
 
 export interface Reader {
@@ -123,11 +233,25 @@ function copyLanes(
   doubtful: Uint8Array,
 ): void {
   if (sign === 0) return;
+  // Nothing times what is not finite is not a number, and neither is a sum with it; two sums need not wait for each other.
+  let [even, odd] = [0, 0];
+  const pairs = used & ~1;
+  for (let lane = 0; lane < pairs; lane += 2) {
+    const one = sign * (memory[from + lane] ?? 0);
+    const other = sign * (memory[from + lane + 1] ?? 0);
+    into[start + lane] = one;
+    into[start + lane + 1] = other;
+    even += 0 * one;
+    odd += 0 * other;
+  }
+  if (pairs < used) {
+    const last = sign * (memory[from + pairs] ?? 0);
+    into[start + pairs] = last;
+    even += 0 * last;
+  }
+  if (even + odd === 0) return;
   for (let lane = 0; lane < used; lane++) {
-    const value = sign * (memory[from + lane] ?? 0);
-    into[start + lane] = value;
-    // Not finite: the difference is not a number.
-    if (value - value !== 0) doubtful[start + lane] = 1;
+    if (!Number.isFinite(memory[from + lane])) doubtful[start + lane] = 1;
   }
 }
 

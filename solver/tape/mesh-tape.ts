@@ -61,7 +61,7 @@ export class MeshTape {
 
   private take(elimination: Elimination): Step {
     const { builder, graph } = this;
-    const { neighbours, slots } = elimination;
+    const { neighbours, slots } = this.sorted(elimination);
     const admittances = Array.from(slots, (slot) => this.admittanceOf(slot));
     const inverse = builder.reciprocal(builder.sum(admittances), this.watchOf(admittances));
     const weights = admittances.map((y) => builder.mul(y, inverse));
@@ -75,7 +75,24 @@ export class MeshTape {
         this.y[slot] = builder.mulAdd(this.admittanceOf(slot), weight, y);
       }
     }
-    return { ...elimination, weights, inverse };
+    return { ...elimination, neighbours, slots, weights, inverse };
+  }
+
+  /**
+   * Neighbours with the boundary last, before it those whose admittances are simplest: a pair's first gives the weight,
+   * its second the admittance that is multiplied by it, and what lies between two of the boundary is mostly of no use.
+   */
+  private sorted({ neighbours, slots }: Elimination): { neighbours: Int32Array; slots: Int32Array } {
+    const { boundaryCount } = this.graph;
+    const rank = Array.from(neighbours, (vertex, at) => {
+      const { re, im } = this.admittanceOf(slots[at] ?? 0);
+      return vertex < boundaryCount ? -1 : Number(re !== NOTHING) + Number(im !== NOTHING);
+    });
+    const order = Array.from(neighbours, (_, at) => at).sort((one, other) => (rank[other] ?? 0) - (rank[one] ?? 0));
+    return {
+      neighbours: Int32Array.from(order, (at) => neighbours[at] ?? 0),
+      slots: Int32Array.from(order, (at) => slots[at] ?? 0),
+    };
   }
 
   /** What the vertex has towards another, the one it is joined to has. */

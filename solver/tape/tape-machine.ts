@@ -25,7 +25,10 @@ export const LANE_STEP = 8;
 
 let machine: TapeMachine | undefined;
 
-/** The machine of this thread: of vector kernels where WebAssembly with SIMD may be compiled, else of plain ones. */
+/**
+ * The machine of this thread: of vector kernels where WebAssembly with SIMD may be compiled, else of plain ones. Both
+ * compute the same to the last bit.
+ */
 export function tapeMachine(): TapeMachine {
   machine ??= vectorMachine() ?? plainMachine();
   return machine;

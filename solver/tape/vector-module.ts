@@ -60,18 +60,13 @@ const I32_LOAD = 0x28;
 const I32_CONST = 0x41;
 const I32_GE_U = 0x4f;
 const I32_ADD = 0x6a;
-const I32_SUB = 0x6b;
 const SIMD = 0xfd;
-const V128_LOAD = [SIMD, 0x00];
-const V128_STORE = [SIMD, 0x0b];
-const V128_CONST = [SIMD, 0x0c];
-const ARITHMETIC: Readonly<Record<string, readonly number[]>> = {
-  '+': [SIMD, 0xf0, 0x01],
-  '-': [SIMD, 0xf1, 0x01],
-  '*': [SIMD, 0xf2, 0x01],
-  '/': [SIMD, 0xf3, 0x01],
-};
-const ONE_TWICE = [0, 0, 0, 0, 0, 0, 0xf0, 0x3f, 0, 0, 0, 0, 0, 0, 0xf0, 0x3f];
+const V128_LOAD = 0x00;
+const V128_STORE = 0x0b;
+const V128_CONST = 0x0c;
+/** f64x2.add, of whose number this is the first byte; sub, mul and div follow. */
+const F64X2_ADD = 0xf0;
+const ARITHMETIC = ['+', '-', '*', '/'];
 
 /** Parameters and locals of `run`, by number. */
 const PC = 0;
@@ -87,91 +82,139 @@ const VECTOR = POINTER + MOST_POINTERS;
 const OPERAND_NAMES = ['a', 'b', 'c', 'd', 'e', 'f'];
 const VECTOR_NAMES = [...OPERAND_NAMES, 'u', 'v', 'watch', 'first', 'second'];
 
-/** The bytes of the module. */
+/** The bytes of the module. It is made on the way to the first sweep, so by a writer and not by joining lists. */
 export function vectorModule(): Uint8Array<ArrayBuffer> {
-  const type = section(1, [1, 0x60, 4, I32, I32, I32, I32, 0]);
-  const memory = section(2, [1, ...text('env'), ...text('memory'), 0x02, 0x00, ...unsigned(1)]);
-  const functions = section(3, [1, 0]);
-  const exports = section(7, [1, ...text('run'), 0x00, 0]);
-  const body = [
-    2,
-    ...unsigned(VECTOR - LEFT),
-    I32,
-    ...unsigned(VECTOR_NAMES.length),
-    V128,
-    ...interpreter(),
-    END,
-  ];
-  const code = section(10, [1, ...unsigned(body.length), ...body]);
-  return Uint8Array.from([0x00, 0x61, 0x73, 0x6d, 1, 0, 0, 0, ...type, ...memory, ...functions, ...exports, ...code]);
+  const body = new Bytes();
+  body.put(2);
+  body.unsigned(VECTOR - LEFT);
+  body.put(I32, VECTOR_NAMES.length, V128);
+  writeInterpreter(body);
+  body.put(END);
+
+  const out = new Bytes();
+  for (const byte of [0x00, 0x61, 0x73, 0x6d, 1, 0, 0, 0]) out.put(byte);
+  // One type: four i32, no result. One import: env.memory. One function of that type, exported as run.
+  for (const byte of [1, 8, 1, 0x60, 4, I32, I32, I32, I32, 0]) out.put(byte);
+  for (const byte of [2, 15, 1, 3, ...codesOf('env'), 6, ...codesOf('memory'), 0x02, 0x00, 1]) out.put(byte);
+  for (const byte of [3, 2, 1, 0]) out.put(byte);
+  for (const byte of [7, 7, 1, 3, ...codesOf('run'), 0x00, 0]) out.put(byte);
+  const size = new Bytes();
+  size.unsigned(body.length);
+  out.put(10);
+  out.unsigned(1 + size.length + body.length);
+  out.put(1);
+  out.append(size);
+  out.append(body);
+  return out.toArray();
 }
 
 /** Takes instruction after instruction and jumps to its kernel. */
-function interpreter(): number[] {
+function writeInterpreter(out: Bytes): void {
   const count = FORMULAS.length;
-  const bytes: number[] = [BLOCK, NO_RESULT, LOOP, NO_RESULT];
-  bytes.push(LOCAL_GET, PC, LOCAL_GET, LAST, I32_GE_U, BR_IF, 1);
-  for (let kernel = 0; kernel < count; kernel++) bytes.push(BLOCK, NO_RESULT);
-  bytes.push(LOCAL_GET, PC, I32_LOAD, 2, 0, BR_TABLE, ...unsigned(count - 1));
-  for (let kernel = 0; kernel < count; kernel++) bytes.push(kernel);
-  bytes.push(END);
-  for (const [kernel, [code, formulas]] of FORMULAS.entries()) {
+  out.put(BLOCK, NO_RESULT, LOOP, NO_RESULT);
+  out.put(LOCAL_GET, PC, LOCAL_GET, LAST);
+  out.put(I32_GE_U, BR_IF, 1);
+  for (let kernel = 0; kernel < count; kernel++) out.put(BLOCK, NO_RESULT);
+  out.put(LOCAL_GET, PC, I32_LOAD, 2);
+  out.put(0, BR_TABLE, count - 1);
+  for (let kernel = 0; kernel < count; kernel++) out.put(kernel);
+  out.put(END);
+  for (let kernel = 0; kernel < count; kernel++) {
+    const [code = 0, formulas = []] = FORMULAS[kernel] ?? [];
+    writeKernel(out, code, formulas);
     // Inside as many blocks as there are kernels to come; then follow the loop and the outermost block.
-    bytes.push(...kernelOf(code, formulas), BR, ...unsigned(count - 1 - kernel));
-    if (kernel < count - 1) bytes.push(END);
+    out.put(BR, count - 1 - kernel);
+    if (kernel < count - 1) out.put(END);
   }
-  bytes.push(END, END);
-  return bytes;
+  out.put(END, END);
 }
 
-function kernelOf(code: number, formulas: readonly string[]): number[] {
+function writeKernel(out: Bytes, code: number, formulas: readonly string[]): void {
   const results = RESULTS[code] ?? 0;
   const operands = OPERANDS[code] ?? 0;
-  const pointers = Array.from({ length: results + operands }, (_, place) => POINTER + place);
-  const bytes: number[] = [];
-  for (const [place, pointer] of pointers.entries()) {
-    bytes.push(LOCAL_GET, PC, I32_LOAD, 2, ...unsigned(4 * (place + 1)), LOCAL_SET, pointer);
+  const pointers = results + operands;
+  for (let place = 0; place < pointers; place++) {
+    out.put(LOCAL_GET, PC, I32_LOAD, 2);
+    out.put(4 * (place + 1), LOCAL_SET, POINTER + place);
   }
-  bytes.push(LOCAL_GET, PC, I32_CONST, ...signed(4 * (pointers.length + 1)), I32_ADD, LOCAL_SET, PC);
-  bytes.push(LOCAL_GET, BYTES, LOCAL_SET, LEFT);
+  out.put(LOCAL_GET, PC);
+  out.addConstant(4 * (pointers + 1));
+  out.put(LOCAL_SET, PC);
+  out.put(LOCAL_GET, BYTES, LOCAL_SET, LEFT);
   const watches = formulas.some((formula) => formula.startsWith('watch'));
-  if (watches) bytes.push(LOCAL_GET, WATCH, LOCAL_SET, WATCHING);
-  const moving = watches ? [...pointers, WATCHING] : pointers;
+  if (watches) out.put(LOCAL_GET, WATCH, LOCAL_SET, WATCHING);
 
-  bytes.push(LOOP, NO_RESULT);
+  const work = formulas.map(parse);
+  out.put(LOOP, NO_RESULT);
   for (let offset = 0; offset < UNROLLED; offset += 16) {
     for (let operand = 0; operand < operands; operand++) {
-      bytes.push(...load(POINTER + results + operand, offset), LOCAL_SET, vector(OPERAND_NAMES[operand] ?? ''));
+      out.put(LOCAL_GET, POINTER + results + operand);
+      out.put(SIMD, V128_LOAD, 3, offset);
+      out.put(LOCAL_SET, VECTOR + operand);
     }
-    if (watches) bytes.push(...load(WATCHING, offset), LOCAL_SET, vector('watch'));
+    if (watches) {
+      out.put(LOCAL_GET, WATCHING);
+      out.put(SIMD, V128_LOAD, 3, offset);
+      out.put(LOCAL_SET, vector('watch'));
+    }
     let result = 0;
-    for (const formula of formulas) {
-      const [expression = '', name] = formula.split(' = ').reverse();
-      bytes.push(...evaluate(expression), LOCAL_SET, vector(name ?? (result++ === 0 ? 'first' : 'second')));
+    for (const { name, tokens } of work) {
+      writeExpression(out, tokens);
+      out.put(LOCAL_SET, name ?? (result++ === 0 ? vector('first') : vector('second')));
     }
-    bytes.push(...store(POINTER, offset, 'first'));
-    if (results === 2) bytes.push(...store(POINTER + 1, offset, 'second'));
-    if (watches) bytes.push(...store(WATCHING, offset, 'watch'));
+    writeStore(out, POINTER, offset, vector('first'));
+    if (results === 2) writeStore(out, POINTER + 1, offset, vector('second'));
+    if (watches) writeStore(out, WATCHING, offset, vector('watch'));
   }
-  for (const pointer of moving) bytes.push(LOCAL_GET, pointer, I32_CONST, ...signed(UNROLLED), I32_ADD, LOCAL_SET, pointer);
-  bytes.push(LOCAL_GET, LEFT, I32_CONST, ...signed(UNROLLED), I32_SUB, LOCAL_TEE, LEFT, BR_IF, 0, END);
-  return bytes;
+  for (let place = 0; place < pointers; place++) moveOn(out, POINTER + place);
+  if (watches) moveOn(out, WATCHING);
+  out.put(LOCAL_GET, LEFT);
+  out.addConstant(-UNROLLED);
+  out.put(LOCAL_TEE, LEFT, BR_IF, 0);
+  out.put(END);
 }
 
-function evaluate(expression: string): number[] {
-  return expression.split(' ').flatMap((token) => {
-    const operation = ARITHMETIC[token];
-    if (operation !== undefined) return [...operation];
-    return token === '1' ? [...V128_CONST, ...ONE_TWICE] : [LOCAL_GET, vector(token)];
+interface Formula {
+  /** The vector that the result goes to; undefined for the next of the operation's own. */
+  readonly name: number | undefined;
+  /** The number of a vector; below zero an operation, by its place in `ARITHMETIC`, or the number one. */
+  readonly tokens: readonly number[];
+}
+
+const ONE = -1 - ARITHMETIC.length;
+
+function parse(formula: string): Formula {
+  const [expression = '', name] = formula.split(' = ').reverse();
+  const tokens = expression.split(' ').map((token) => {
+    if (token === '1') return ONE;
+    const operation = ARITHMETIC.indexOf(token);
+    return operation >= 0 ? -1 - operation : vector(token);
   });
+  return { name: name === undefined ? undefined : vector(name), tokens };
 }
 
-function load(pointer: number, offset: number): number[] {
-  return [LOCAL_GET, pointer, ...V128_LOAD, 3, ...unsigned(offset)];
+function writeExpression(out: Bytes, tokens: readonly number[]): void {
+  for (const token of tokens) {
+    if (token >= 0) out.put(LOCAL_GET, token);
+    else if (token === ONE) {
+      out.put(SIMD, V128_CONST);
+      for (let half = 0; half < 2; half++) {
+        out.put(0, 0, 0, 0);
+        out.put(0, 0, 0xf0, 0x3f);
+      }
+    } else out.put(SIMD, F64X2_ADD - 1 - token, 0x01);
+  }
 }
 
-function store(pointer: number, offset: number, name: string): number[] {
-  return [LOCAL_GET, pointer, LOCAL_GET, vector(name), ...V128_STORE, 3, ...unsigned(offset)];
+function writeStore(out: Bytes, pointer: number, offset: number, from: number): void {
+  out.put(LOCAL_GET, pointer, LOCAL_GET, from);
+  out.put(SIMD, V128_STORE, 3, offset);
+}
+
+function moveOn(out: Bytes, pointer: number): void {
+  out.put(LOCAL_GET, pointer);
+  out.addConstant(UNROLLED);
+  out.put(LOCAL_SET, pointer);
 }
 
 function vector(name: string): number {
@@ -180,21 +223,42 @@ function vector(name: string): number {
   return VECTOR + place;
 }
 
-function section(id: number, content: readonly number[]): number[] {
-  return [id, ...unsigned(content.length), ...content];
+function codesOf(name: string): number[] {
+  return Array.from(name, (letter) => letter.charCodeAt(0));
 }
 
-function text(name: string): number[] {
-  return [...unsigned(name.length), ...Array.from(name, (letter) => letter.charCodeAt(0))];
-}
+class Bytes {
+  length = 0;
+  private bytes = new Uint8Array(16_384);
 
-/** LEB128, unsigned. */
-function unsigned(value: number): number[] {
-  const low = value & 0x7f;
-  return value < 0x80 ? [low] : [low | 0x80, ...unsigned(value >>> 7)];
-}
+  /** Up to four bytes. */
+  put(a: number, b?: number, c?: number, d?: number): void {
+    this.bytes[this.length++] = a;
+    if (b === undefined) return;
+    this.bytes[this.length++] = b;
+    if (c === undefined) return;
+    this.bytes[this.length++] = c;
+    if (d !== undefined) this.bytes[this.length++] = d;
+  }
 
-/** LEB128, signed; for what is not negative a clear sign bit in the last byte. */
-function signed(value: number): number[] {
-  return value < 0x40 ? [value] : [(value & 0x7f) | 0x80, ...signed(value >>> 7)];
+  /** LEB128, unsigned. */
+  unsigned(value: number): void {
+    let left = value;
+    for (; left >= 0x80; left >>>= 7) this.put((left & 0x7f) | 0x80);
+    this.put(left);
+  }
+
+  /** Adds a small number to the i32 on the stack; LEB128, signed, in two bytes. */
+  addConstant(value: number): void {
+    this.put(I32_CONST, (value & 0x7f) | 0x80, (value >> 7) & 0x7f, I32_ADD);
+  }
+
+  append(other: Bytes): void {
+    this.bytes.set(other.bytes.subarray(0, other.length), this.length);
+    this.length += other.length;
+  }
+
+  toArray(): Uint8Array<ArrayBuffer> {
+    return this.bytes.slice(0, this.length);
+  }
 }
