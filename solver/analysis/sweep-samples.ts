@@ -1,9 +1,8 @@
 import type { Element, ElementList } from '../elements/element-list';
 import { lawsOf } from '../elements/registry';
 import { validateElementList } from '../elements/validate-element-list';
-import { runOverSamples, trustedRange } from '../tape/lane-runner';
+import { OUTSIDE, trustedRange } from '../tape/lane-runner';
 import type { ScalarInput } from '../tape/network-inputs';
-import { compileSweep } from '../tape/sweep-tape';
 import { LEVEL } from '../tape/tape-builder';
 import { faultOfFrequency } from './frequency';
 import type { Network } from './network';
@@ -13,6 +12,7 @@ import { invalid, isProblem, problem } from './problem';
 import { ExactSweep } from './sweep-exact';
 import type { Output, SweepOutput } from './sweep-output';
 import { resolveOutput } from './sweep-output';
+import { SweepProgram } from './sweep-program';
 
 export interface SweepSamplesOptions {
   /** The operating frequencies, hertz, in any order. */
@@ -71,16 +71,13 @@ export function sweepSamples(list: ElementList, options: SweepSamplesOptions): S
   const traces = roomFor(options.outputs, size, options.reuse);
   const doubtful = new Uint8Array(size);
   const idOf = (row: number): string => network.elements[network.elementOf[row] ?? 0]?.id ?? '';
-  const tape = compileSweep(network, outputs, (row) => (varied.has(idOf(row)) ? LEVEL.block : LEVEL.constant));
-  if (tape === undefined) doubtful.fill(1);
-  else {
-    const numbersOf = (input: ScalarInput): ArrayLike<number> | undefined => {
-      const values = varied.get(idOf(input.row));
-      return values === undefined ? undefined : numbersOfInput(network, input, values);
-    };
-    runOverSamples(tape, network.laws, frequencies, { count: sampleCount, numbersOf }, traces, doubtful);
-    doubtOutOfRange(network, varied, frequencies, sampleCount, doubtful);
-  }
+  const program = new SweepProgram(network, outputs, (row) => (varied.has(idOf(row)) ? LEVEL.block : LEVEL.constant));
+  const numbersOf = (input: ScalarInput): ArrayLike<number> | undefined => {
+    const values = varied.get(idOf(input.row));
+    return values === undefined ? undefined : numbersOfInput(network, input, values);
+  };
+  program.runSamples(network.laws, frequencies, { count: sampleCount, numbersOf }, traces, doubtful);
+  doubtOutOfRange(network, varied, frequencies, sampleCount, doubtful);
   for (const [sample, places] of doubtsBySample(doubtful, sampleCount)) {
     const exact = new ExactSweep(sampleOf(checked.list, varied, sample));
     for (const output of outputs) exact.prepare(output);
@@ -102,7 +99,8 @@ export function sweepSamples(list: ElementList, options: SweepSamplesOptions): S
 /** The places of the frequencies that are in doubt, for each sample that has any. */
 function doubtsBySample(doubtful: Uint8Array, sampleCount: number): Map<number, number[]> {
   const doubts = new Map<number, number[]>();
-  for (let at = doubtful.indexOf(1); at >= 0; at = doubtful.indexOf(1, at + 1)) {
+  for (let at = 0; at < doubtful.length; at++) {
+    if (doubtful[at] === 0) continue;
     const sample = at % sampleCount;
     const places = doubts.get(sample);
     if (places === undefined) doubts.set(sample, [Math.floor(at / sampleCount)]);
@@ -187,7 +185,7 @@ function doubtOutOfRange(
 ): void {
   const mark = (sample: number, low: number, high: number): void => {
     for (const [place, frequency] of frequencies.entries()) {
-      if (!(frequency >= low && frequency <= high)) doubtful[place * sampleCount + sample] = 1;
+      if (!(frequency >= low && frequency <= high)) doubtful[place * sampleCount + sample] = OUTSIDE;
     }
   };
   const common = trustedRange(network.laws.filter((_, row) => !varied.has(network.elements[network.elementOf[row] ?? 0]?.id ?? '')));

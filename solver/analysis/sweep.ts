@@ -1,11 +1,6 @@
 import type { ElementList } from '../elements/element-list';
 import type { Law } from '../elements/law';
 import { validateElementList } from '../elements/validate-element-list';
-import { runOverFrequencies } from '../tape/lane-runner';
-import { shapeOf } from '../tape/network-inputs';
-import type { SweepTape } from '../tape/sweep-tape';
-import { compileSweep } from '../tape/sweep-tape';
-import { LEVEL } from '../tape/tape-builder';
 import { faultOfFrequency } from './frequency';
 import type { Network } from './network';
 import { toNetwork } from './network';
@@ -14,6 +9,7 @@ import { isProblem, problem } from './problem';
 import { ExactSweep } from './sweep-exact';
 import type { Output, SweepOutput } from './sweep-output';
 import { resolveOutput } from './sweep-output';
+import { SweepProgram } from './sweep-program';
 
 export interface SweepOptions {
   /** The operating frequencies, hertz, in any order. */
@@ -85,7 +81,7 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
     if (isProblem(found)) return found;
     resolved.push(found);
   }
-  let compiled = compile(network, resolved);
+  let program = new SweepProgram(network, resolved);
   return {
     ok: true,
     run(frequencies, { list: changed, reuse } = {}) {
@@ -100,20 +96,11 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
           return problem('invalid', [], [], 'The list has other elements or nodes than the one that was prepared; prepare it anew.');
         }
         ({ laws } = other);
-        if (shapeOf(laws) !== compiled.shape) compiled = compile(other, resolved);
+        if (!program.fits(laws)) program = new SweepProgram(other, resolved);
       }
-      return runPrepared(current, laws, compiled.tape, resolved, outputs, frequencies, reuse);
+      return runPrepared(current, laws, program, resolved, outputs, frequencies, reuse);
     },
   };
-}
-
-interface Compiled {
-  readonly shape: string;
-  readonly tape: SweepTape | undefined;
-}
-
-function compile(network: Network, outputs: readonly Output[]): Compiled {
-  return { shape: shapeOf(network.laws), tape: compileSweep(network, outputs, () => LEVEL.constant) };
 }
 
 function isSameGraph(one: Network, other: Network): boolean {
@@ -129,7 +116,7 @@ function isSameGraph(one: Network, other: Network): boolean {
 function runPrepared(
   list: ElementList,
   laws: readonly Law[],
-  tape: SweepTape | undefined,
+  program: SweepProgram,
   outputs: readonly Output[],
   asked: readonly SweepOutput[],
   given: ArrayLike<number>,
@@ -142,15 +129,14 @@ function runPrepared(
   }
   const count = frequencies.length;
   const doubtful = new Uint8Array(count);
-  if (tape === undefined) doubtful.fill(1);
-  else runOverFrequencies(tape, laws, frequencies, traces, doubtful);
+  program.run(laws, frequencies, traces, doubtful);
 
   const problems = new Map<string, { problem: Problem; at: number[] }>();
-  if (doubtful.includes(1)) {
+  if (doubtful.some((doubt) => doubt !== 0)) {
     const exact = new ExactSweep(list);
     for (const output of outputs) exact.prepare(output);
     for (const [place, frequency] of frequencies.entries()) {
-      if (doubtful[place] !== 1) continue;
+      if (doubtful[place] === 0) continue;
       for (const found of exact.solveAt(frequency)) note(problems, found, place);
       for (const [index, { re, im, determined }] of traces.entries()) {
         const output = outputs[index];

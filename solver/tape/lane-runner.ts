@@ -21,6 +21,11 @@ const MOST_NUMBERS = 1_500_000;
 
 const WATCHED = [LEVEL.constant, LEVEL.block, LEVEL.varying];
 
+/** The tape may do better in another order; see `SweepProgram`. */
+export const WEAK = 1;
+/** Not to be had from a tape. */
+export const OUTSIDE = 2;
+
 /** Where an output goes: one number a frequency. */
 export interface OutputArrays {
   readonly re: Float64Array;
@@ -34,30 +39,65 @@ export function lanesFor(slotCount: number, points: number): number {
   return Math.max(LANE_STEP, Math.ceil(points / blocks / LANE_STEP) * LANE_STEP);
 }
 
-/**
- * Runs a tape over frequencies, a block of lanes at a time, and writes each output's values. Marks the frequencies at
- * which it is not to be trusted: a pivot that has cancelled, a value that is not finite, an element value out of range
- * or not known, a source of just that frequency, 0 Hz.
- */
-export function runOverFrequencies(
-  { program, inputs, values }: SweepTape,
+/** Element values that differ from sample to sample. */
+export interface Samples {
+  readonly count: number;
+  /** The numbers of an input over the samples; undefined for one that is the same in all. */
+  readonly numbersOf: (input: ScalarInput) => ArrayLike<number> | undefined;
+}
+
+/** A point of each frequency, or of each frequency and the sample that stands beside it. */
+export interface Points {
+  readonly frequencies: Float64Array;
+  readonly samples?: Samples;
+  readonly sampleOf?: Int32Array;
+}
+
+interface Varied {
+  readonly start: number;
+  readonly numbers: ArrayLike<number>;
+}
+
+/** Fills in what is the same for all points, and answers what is not. */
+function fillScalars(
+  { inputs }: SweepTape,
   laws: readonly Law[],
-  frequencies: Float64Array,
+  samples: Samples | undefined,
+  memory: Float64Array,
+  lanes: number,
+  at: (part: Part) => number,
+): Varied[] {
+  const varied: Varied[] = [];
+  for (const input of inputs.scalars) {
+    const start = at(input.part);
+    const law = laws[input.row];
+    if (start < 0 || law === undefined) continue;
+    const numbers = samples?.numbersOf(input);
+    if (numbers === undefined) memory.fill(input.read(law), start, start + lanes);
+    else varied.push({ start, numbers });
+  }
+  return varied;
+}
+
+/**
+ * Runs a tape over points, a block of lanes at a time, and writes each output's values. Marks the points at which it is
+ * not to be trusted: `WEAK` for a pivot that has cancelled or a value that is not finite, `OUTSIDE` for an element value
+ * out of range or not known, a source of just that frequency, 0 Hz.
+ */
+export function runOverPoints(
+  tape: SweepTape,
+  laws: readonly Law[],
+  { frequencies, samples, sampleOf }: Points,
   arrays: readonly OutputArrays[],
   doubtful: Uint8Array,
   machine: TapeMachine = tapeMachine(),
 ): void {
+  const { program, inputs, values } = tape;
   const count = frequencies.length;
-  const range = trustedRange(laws);
-  const own = ownFrequencies(laws);
   const lanes = lanesFor(program.slotCount, count);
   const memory = machine.load(program, lanes);
   const at = (part: Part): number => program.slotOf(part) * lanes;
-  for (const { part, row, read } of inputs.scalars) {
-    const start = at(part);
-    const law = laws[row];
-    if (start >= 0 && law !== undefined) memory.fill(read(law), start, start + lanes);
-  }
+  const varied = fillScalars(tape, laws, samples, memory, lanes, at);
   const functions = inputs.functions.map(({ value, row, read }) => {
     const law = laws[row];
     return { re: at(value.re), im: at(value.im), table: law === undefined ? undefined : read(law) };
@@ -67,21 +107,28 @@ export function runOverFrequencies(
   const omega = at(inputs.omega);
   const [constantWatch = 0, blockWatch = 0, watch = 0] = WATCHED.map((level) => watchSlot(level) * lanes);
   const outputs = values.map((value) => readerOf(value, at));
-  markOutside(frequencies, range, doubtful);
-  const limit = WATCH_LIMIT - (memory[constantWatch] ?? 0) - (memory[blockWatch] ?? 0);
+  const limit = WATCH_LIMIT - (memory[constantWatch] ?? 0);
   for (let start = 0; start < count; start += lanes) {
     const used = Math.min(lanes, count - start);
     if (omega >= 0) fillOmega(memory, omega, lanes, frequencies, start, used);
+    if (varied.length > 0 && sampleOf !== undefined) {
+      for (const { start: from, numbers } of varied) {
+        for (let lane = 0; lane < lanes; lane++) {
+          memory[from + lane] = numbers[sampleOf[start + Math.min(lane, used - 1)] ?? 0] ?? 0;
+        }
+      }
+      machine.run(LEVEL.block);
+    }
     for (const { re, im, table } of functions) {
       for (let lane = 0; lane < lanes; lane++) {
         const value = table?.(frequencies[start + Math.min(lane, used - 1)] ?? 0);
-        if (value === undefined && lane < used) doubtful[start + lane] = 1;
+        if (value === undefined && lane < used) doubtful[start + lane] = OUTSIDE;
         if (re >= 0) memory[re + lane] = value?.[0] ?? 1;
         if (im >= 0) memory[im + lane] = value?.[1] ?? 1;
       }
     }
     machine.run(LEVEL.varying);
-    markWatched(memory, watch, limit, used, doubtful, start);
+    markBothWatched(memory, watch, blockWatch, limit, used, doubtful, start);
     for (let place = 0; place < outputs.length; place++) {
       const output = outputs[place];
       const array = arrays[place];
@@ -90,17 +137,7 @@ export function runOverFrequencies(
       copyLanes(memory, output.im, output.signIm, array.im, start, used, doubtful);
     }
   }
-  if (own.length === 0) return;
-  for (const [place, frequency] of frequencies.entries()) {
-    if (own.some((live) => sameFrequency(live, frequency))) doubtful[place] = 1;
-  }
-}
-
-/** The laws of the rows that differ from sample to sample: a row's number in each sample, by the input that reads it. */
-export interface Samples {
-  readonly count: number;
-  /** The numbers of an input over the samples; undefined for one that is the same in all. */
-  readonly numbersOf: (input: ScalarInput) => ArrayLike<number> | undefined;
+  markOutside(laws, frequencies, doubtful);
 }
 
 /**
@@ -108,7 +145,7 @@ export interface Samples {
  * on the frequency is done once a block. Values and doubts are written at frequency·samples + sample.
  */
 export function runOverSamples(
-  { program, inputs, values }: SweepTape,
+  tape: SweepTape,
   laws: readonly Law[],
   frequencies: Float64Array,
   samples: Samples,
@@ -116,20 +153,13 @@ export function runOverSamples(
   doubtful: Uint8Array,
   machine: TapeMachine = tapeMachine(),
 ): void {
+  const { program, inputs, values } = tape;
   const { count } = samples;
   const lanes = lanesFor(program.slotCount, count);
   const memory = machine.load(program, lanes);
   const at = (part: Part): number => program.slotOf(part) * lanes;
   const own = ownFrequencies(laws);
-  const varied: { readonly start: number; readonly numbers: ArrayLike<number> }[] = [];
-  for (const input of inputs.scalars) {
-    const start = at(input.part);
-    const law = laws[input.row];
-    if (start < 0 || law === undefined) continue;
-    const numbers = samples.numbersOf(input);
-    if (numbers === undefined) memory.fill(input.read(law), start, start + lanes);
-    else varied.push({ start, numbers });
-  }
+  const varied = fillScalars(tape, laws, samples, memory, lanes, at);
   const functions = inputs.functions.map(({ value, row, read }) => {
     const law = laws[row];
     return { re: at(value.re), im: at(value.im), table: law === undefined ? undefined : read(law) };
@@ -157,7 +187,7 @@ export function runOverSamples(
       machine.run(LEVEL.varying);
       const start = place * count + first;
       if (isKnown) markBothWatched(memory, watch, blockWatch, limit, used, doubtful, start);
-      else doubtful.fill(1, start, start + used);
+      else doubtful.fill(OUTSIDE, start, start + used);
       for (let index = 0; index < outputs.length; index++) {
         const output = outputs[index];
         const array = arrays[index];
@@ -175,10 +205,17 @@ function fillOmega(memory: Float64Array, omega: number, lanes: number, frequenci
   for (let lane = used; lane < lanes; lane++) memory[omega + lane] = memory[omega + used - 1] ?? 0;
 }
 
-function markOutside(frequencies: Float64Array, { low, high }: { low: number; high: number }, doubtful: Uint8Array): void {
+/** Marks the frequencies at which an admittance is out of range, at which a source of its own delivers, and 0 Hz. */
+function markOutside(laws: readonly Law[], frequencies: Float64Array, doubtful: Uint8Array): void {
+  const { low, high } = trustedRange(laws);
+  const own = ownFrequencies(laws);
   for (let place = 0; place < frequencies.length; place++) {
     const frequency = frequencies[place] ?? 0;
-    if (!(frequency >= low && frequency <= high)) doubtful[place] = 1;
+    if (!(frequency >= low && frequency <= high)) doubtful[place] = OUTSIDE;
+  }
+  if (own.length === 0) return;
+  for (const [place, frequency] of frequencies.entries()) {
+    if (own.some((live) => sameFrequency(live, frequency))) doubtful[place] = OUTSIDE;
   }
 }
 
@@ -194,7 +231,7 @@ function markWatched(
     odd += memory[watch + lane + 1] ?? 0;
   }
   if (even + odd < limit) return;
-  for (let lane = 0; lane < used; lane++) if (!((memory[watch + lane] ?? 0) < limit)) doubtful[start + lane] = 1;
+  for (let lane = 0; lane < used; lane++) if (!((memory[watch + lane] ?? 0) < limit)) doubtful[start + lane] = WEAK;
 }
 
 /** The same for a watch and the one of an earlier level, lane by lane. */
@@ -251,7 +288,7 @@ function copyLanes(
   }
   if (even + odd === 0) return;
   for (let lane = 0; lane < used; lane++) {
-    if (!Number.isFinite(memory[from + lane])) doubtful[start + lane] = 1;
+    if (!Number.isFinite(memory[from + lane])) doubtful[start + lane] = WEAK;
   }
 }
 

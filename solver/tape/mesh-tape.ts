@@ -1,5 +1,4 @@
 import type { Elimination, MeshGraph, OrderWishes } from './mesh-graph';
-import { orderElimination } from './mesh-graph';
 import type { Part, TapeBuilder, Value } from './tape-builder';
 import { isZero, negative, NOTHING, ZERO } from './tape-builder';
 
@@ -32,11 +31,12 @@ export class MeshTape {
     readonly builder: TapeBuilder,
     readonly graph: MeshGraph,
     private readonly admittance: (slot: number) => Value,
-    wishes: OrderWishes,
+    order: readonly Elimination[],
+    groups: OrderWishes['groups'],
   ) {
     this.placeOf = new Float64Array(graph.vertexCount).fill(Infinity);
-    this.groupOf = new Map(wishes.groups.flatMap((group, number) => group.map((vertex) => [vertex, number] as const)));
-    for (const elimination of orderElimination(graph, wishes)) {
+    this.groupOf = new Map(groups.flatMap((group, number) => group.map((vertex) => [vertex, number] as const)));
+    for (const elimination of order) {
       this.placeOf[elimination.vertex] = this.steps.length;
       this.steps.push(elimination.into < 0 ? this.take(elimination) : this.join(elimination));
     }

@@ -3,10 +3,12 @@ import type { Network } from '../analysis/network';
 import type { Law, Tabulated } from '../elements/law';
 import type { GivenTree } from './given-tree';
 import { growTrees, isGivenVoltage, nodesBelow } from './given-tree';
-import { MeshGraph } from './mesh-graph';
+import type { OrderWishes } from './mesh-graph';
+import { MeshGraph, orderElimination } from './mesh-graph';
 import type { Excitation } from './mesh-tape';
 import { MeshSolution, MeshTape } from './mesh-tape';
 import type { NetworkInputs } from './network-inputs';
+import { weakestPivot } from './pivot-strength';
 import type { TapeBuilder, Value } from './tape-builder';
 import { isZero, negative, NOTHING, ZERO } from './tape-builder';
 
@@ -33,6 +35,20 @@ export interface DriveReadings {
   admittancesOf(row: number): readonly { readonly row: number; readonly sign: 1 | -1 }[];
 }
 
+/** What a network is compiled for. */
+export interface TapeWishes {
+  /** Nodes between which outputs are asked for: they stay longest. */
+  readonly last: readonly number[];
+  /** Pairs of nodes at which drives from outside will be put. */
+  readonly probed: readonly (readonly [number, number])[];
+  /** Frequencies, hertz, at which no pivot may be weak; none for the usual order. */
+  readonly samples: readonly number[];
+}
+
+/** A pivot of less than this part of its terms is one to be put off, if that gives a better one. */
+const STRONG_PIVOT = 0.1;
+const MOST_POSTPONED = 8;
+
 /** A network of admittances and independent sources, by nodes, on a tape. */
 export class NodalTape {
   readonly builder: TapeBuilder;
@@ -43,33 +59,38 @@ export class NodalTape {
   /**
    * The tape of a network; undefined where it has other elements, loops of given voltages, or a part that no
    * admittance ties to the reference.
-   *
-   * @param last nodes between which outputs are asked for: they stay longest
-   * @param probed pairs of nodes at which drives from outside will be put
    */
-  static of(
-    network: Network,
-    inputs: NetworkInputs,
-    last: readonly number[],
-    probed: readonly (readonly [number, number])[],
-  ): NodalTape | undefined {
+  static of(network: Network, inputs: NetworkInputs, wishes: TapeWishes): NodalTape | undefined {
     if (network.laws.some(({ law }) => law === 'equation')) return undefined;
     const tree = growTrees(network);
     if (tree === undefined || !isGrounded(network, tree)) return undefined;
-    return new NodalTape(network, inputs, tree, last, probed);
+    return new NodalTape(network, inputs, tree, wishes);
   }
 
   private constructor(
     readonly network: Network,
     readonly inputs: NetworkInputs,
     private readonly tree: GivenTree,
-    lastNodes: readonly number[],
-    probed: readonly (readonly [number, number])[],
+    wishes: TapeWishes,
   ) {
     this.builder = inputs.builder;
+    const { vertexOf, boundaryCount } = tree;
+    const last = new Set(wishes.last.map((node) => vertexOf[node] ?? 0).filter((vertex) => vertex >= boundaryCount));
+    const strengths = this.strengths();
+    const groups = tree.groups.map((group) => strongestFirst(group, strengths));
+    const postponed = this.postponedAt(wishes, { last, groups });
+    const graph = this.graphOf(wishes);
+    const order = orderElimination(graph, { last: new Set([...last, ...postponed]), groups });
+    this.mesh = new MeshTape(this.builder, graph, (slot) => this.admittanceOfSlot(slot), order, groups);
+  }
+
+  /** The graph of the vertices; what stands in its slots is written to `rowsOfSlot`, the same each time. */
+  private graphOf({ probed }: TapeWishes): MeshGraph {
+    const { network, tree } = this;
     const { first, second, rowCount } = network;
     const { vertexOf, vertexCount, boundaryCount } = tree;
     const graph = new MeshGraph(vertexCount, boundaryCount);
+    this.rowsOfSlot.length = 0;
     for (let row = 0; row < rowCount; row++) {
       const one = vertexOf[first[row] ?? 0] ?? 0;
       const other = vertexOf[second[row] ?? 0] ?? 0;
@@ -81,9 +102,49 @@ export class NodalTape {
       const [one, other] = [vertexOf[a] ?? 0, vertexOf[b] ?? 0];
       if (one !== other) graph.slot(one, other);
     }
-    const last = new Set(lastNodes.map((node) => vertexOf[node] ?? 0).filter((vertex) => vertex >= boundaryCount));
-    const groups = tree.groups.map((group) => strongestFirst(group, this.strengths()));
-    this.mesh = new MeshTape(this.builder, graph, (slot) => this.admittanceOfSlot(slot), { last, groups });
+    return graph;
+  }
+
+  /** The vertices to put off so that pivots are strong at the samples: the weakest, again and again, while that helps. */
+  private postponedAt(wishes: TapeWishes, { last, groups }: OrderWishes): ReadonlySet<number> {
+    let best: ReadonlySet<number> = new Set<number>();
+    if (wishes.samples.length === 0) return best;
+    let bestStrength = -1;
+    const postponed = new Set<number>();
+    for (let attempt = 0; attempt <= MOST_POSTPONED; attempt++) {
+      const graph = this.graphOf(wishes);
+      const order = orderElimination(graph, { last: new Set([...last, ...postponed]), groups });
+      let weakest = { vertex: -1, strength: 1 };
+      for (const frequency of wishes.samples) {
+        const { re, im } = this.numbersAt(frequency);
+        const found = weakestPivot(graph, order, re, im);
+        if (found.strength < weakest.strength) weakest = found;
+      }
+      if (weakest.strength > bestStrength) {
+        bestStrength = weakest.strength;
+        best = new Set(postponed);
+      }
+      if (bestStrength >= STRONG_PIVOT || postponed.has(weakest.vertex)) break;
+      postponed.add(weakest.vertex);
+    }
+    return best;
+  }
+
+  /** The admittances of the slots at a frequency, in numbers. */
+  private numbersAt(frequency: number): { re: number[]; im: number[] } {
+    const re: number[] = [];
+    const im: number[] = [];
+    for (const [slot, rows] of this.rowsOfSlot.entries()) {
+      let [sumRe, sumIm] = [0, 0];
+      for (const row of rows ?? []) {
+        const [r, i] = admittanceAt(this.network.laws[row], frequency);
+        sumRe += r;
+        sumIm += i;
+      }
+      re[slot] = sumRe;
+      im[slot] = sumIm;
+    }
+    return { re, im };
   }
 
   /**
@@ -204,6 +265,25 @@ function middleOf(laws: readonly Law[]): number {
 
 function strongestFirst(group: readonly number[], strengths: Float64Array): number[] {
   return [...group].sort((one, other) => (strengths[other] ?? 0) - (strengths[one] ?? 0));
+}
+
+function admittanceAt(law: Law | undefined, frequency: number): readonly [number, number] {
+  const omega = 2 * Math.PI * frequency;
+  switch (law?.law) {
+    case 'resistance':
+      return [1 / law.resistance, 0];
+    case 'capacitance':
+      return [0, omega * law.capacitance];
+    case 'inductance':
+      return [0, -1 / (omega * law.inductance)];
+    case 'impedance': {
+      const [re, im] = law.at(frequency) ?? [1, 0];
+      const square = re * re + im * im;
+      return [re / square, -im / square];
+    }
+    default:
+      return [0, 0];
+  }
 }
 
 function tableOf(law: Law): Tabulated | undefined {

@@ -25,17 +25,19 @@ const MOST_LAST = 6;
  * Compiles outputs of a network; undefined where its form is one that only the exact engine can do.
  *
  * @param levelOf the level of a row's numbers: constant, or different from lane to lane
+ * @param samples frequencies, hertz, at which no pivot may be weak; none for the usual order
  */
 export function compileSweep(
   network: Network,
   outputs: readonly Output[],
   levelOf: (row: number) => Level,
+  samples: readonly number[] = [],
 ): SweepTape | undefined {
   const builder = new TapeBuilder();
   const inputs = new NetworkInputs(builder, network.laws, levelOf);
   const last = new Set(outputs.flatMap((output) => nodesOf(network, output)));
   const probed = outputs.flatMap((output) => probesOf(network, output));
-  const tape = NodalTape.of(network, inputs, last.size > MOST_LAST ? [] : [...last], probed);
+  const tape = NodalTape.of(network, inputs, { last: last.size > MOST_LAST ? [] : [...last], probed, samples });
   if (tape === undefined) return undefined;
   const values = new SweepWriter(network, inputs, tape).write(outputs);
   const program = compileTape(

@@ -1,0 +1,108 @@
+import type { Law } from '../elements/law';
+import type { OutputArrays, Points, Samples } from '../tape/lane-runner';
+import { OUTSIDE, runOverPoints, runOverSamples, WEAK } from '../tape/lane-runner';
+import { shapeOf } from '../tape/network-inputs';
+import type { SweepTape } from '../tape/sweep-tape';
+import { compileSweep } from '../tape/sweep-tape';
+import type { Level } from '../tape/tape-builder';
+import { LEVEL } from '../tape/tape-builder';
+import type { Network } from './network';
+import type { Output } from './sweep-output';
+
+/** Other orders of elimination that are compiled for points at which the usual one has a weak pivot, and kept. */
+const MOST_ALTERNATIVES = 4;
+const SAMPLES = 3;
+
+/**
+ * Outputs of a network, compiled. A point at which a pivot is weak (the middle of an inductor and a capacitor near their
+ * resonance) is done again by a tape in whose order it is not, found at some of these points and kept for the next time.
+ */
+export class SweepProgram {
+  private readonly shape: string;
+  private readonly usual: SweepTape | undefined;
+  private readonly alternatives: SweepTape[] = [];
+
+  /** @param levelOf the level of a row's numbers */
+  constructor(
+    private readonly network: Network,
+    private readonly outputs: readonly Output[],
+    private readonly levelOf: (row: number) => Level = () => LEVEL.constant,
+  ) {
+    this.shape = shapeOf(network.laws);
+    this.usual = compileSweep(network, outputs, levelOf);
+  }
+
+  /** Whether the same program serves other laws of the same network. */
+  fits(laws: readonly Law[]): boolean {
+    return shapeOf(laws) === this.shape;
+  }
+
+  /** Runs over frequencies; marks in `doubtful` the places that are left to the exact engine. */
+  run(laws: readonly Law[], frequencies: Float64Array, arrays: readonly OutputArrays[], doubtful: Uint8Array): void {
+    if (this.usual === undefined) {
+      doubtful.fill(OUTSIDE);
+      return;
+    }
+    runOverPoints(this.usual, laws, { frequencies }, arrays, doubtful);
+    if (doubtful.includes(WEAK)) this.runAgain(laws, (place) => frequencies[place] ?? 0, arrays, doubtful);
+  }
+
+  /** Runs over frequencies and samples; values and marks stand at frequency·samples + sample. */
+  runSamples(
+    laws: readonly Law[],
+    frequencies: Float64Array,
+    samples: Samples,
+    arrays: readonly OutputArrays[],
+    doubtful: Uint8Array,
+  ): void {
+    if (this.usual === undefined) {
+      doubtful.fill(OUTSIDE);
+      return;
+    }
+    runOverSamples(this.usual, laws, frequencies, samples, arrays, doubtful);
+    if (!doubtful.includes(WEAK)) return;
+    this.runAgain(laws, (at) => frequencies[Math.floor(at / samples.count)] ?? 0, arrays, doubtful, samples);
+  }
+
+  private runAgain(
+    laws: readonly Law[],
+    frequencyAt: (at: number) => number,
+    arrays: readonly OutputArrays[],
+    doubtful: Uint8Array,
+    samples?: Samples,
+  ): void {
+    for (let attempt = 0; attempt < MOST_ALTERNATIVES; attempt++) {
+      const places: number[] = [];
+      for (let at = doubtful.indexOf(WEAK); at >= 0; at = doubtful.indexOf(WEAK, at + 1)) places.push(at);
+      if (places.length === 0) return;
+      const frequencies = Float64Array.from(places, frequencyAt);
+      const tape = (this.alternatives[attempt] ??= this.alternativeFor(laws, frequencies));
+      const points: Points = {
+        frequencies,
+        samples,
+        sampleOf: samples === undefined ? undefined : Int32Array.from(places, (at) => at % samples.count),
+      };
+      const count = places.length;
+      const found = arrays.map(() => ({ re: new Float64Array(count), im: new Float64Array(count) }));
+      const still = new Uint8Array(count);
+      runOverPoints(tape, laws, points, found, still);
+      for (const [index, { re, im }] of found.entries()) {
+        const array = arrays[index];
+        if (array === undefined) continue;
+        for (const [place, at] of places.entries()) {
+          array.re[at] = re[place] ?? 0;
+          array.im[at] = im[place] ?? 0;
+        }
+      }
+      for (const [place, at] of places.entries()) doubtful[at] = still[place] ?? OUTSIDE;
+    }
+  }
+
+  private alternativeFor(laws: readonly Law[], frequencies: Float64Array): SweepTape {
+    const step = Math.max(1, Math.floor((frequencies.length - 1) / (SAMPLES - 1)));
+    const samples = [...new Set(Array.from({ length: SAMPLES }, (_, k) => frequencies[Math.min(k * step, frequencies.length - 1)] ?? 0))];
+    const tape = compileSweep({ ...this.network, laws }, this.outputs, this.levelOf, samples);
+    if (tape === undefined) throw new Error('a network that was compiled once is not compiled again');
+    return tape;
+  }
+}
