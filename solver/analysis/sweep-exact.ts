@@ -3,7 +3,8 @@ import { Engine } from './engine';
 import type { Network } from './network';
 import type { Phasor } from './network-reading';
 import type { Problem } from './problem';
-import type { Output, Transfer } from './sweep-output';
+import { exactDerivative } from './sweep-exact-derivatives';
+import type { Output, SweepOutput, Transfer } from './sweep-output';
 
 /** A value, or undefined where it is not determined. */
 export type Found = { readonly re: number; readonly im: number } | undefined;
@@ -17,6 +18,7 @@ const PROBE = 'probe';
 export class ExactSweep {
   private readonly engine: Engine;
   private readonly probes = new Map<string, Engine>();
+  private frequency = 0;
 
   constructor(private readonly list: ElementList) {
     this.engine = new Engine(list);
@@ -28,6 +30,7 @@ export class ExactSweep {
 
   /** Solves at a frequency; answers what stood in the way. */
   solveAt(frequency: number): readonly Problem[] {
+    this.frequency = frequency;
     for (const probe of this.probes.values()) probe.solveAt(frequency);
     return this.engine.solveAt(frequency);
   }
@@ -40,8 +43,11 @@ export class ExactSweep {
     if (!this.probes.has(key)) this.probes.set(key, new Engine(this.probed(one, other)));
   }
 
-  /** The output at the frequency solved last; derivatives are not to be had this way. */
-  read(output: Output): Found {
+  /** The output at the frequency solved last; `asked` is the same by its names. */
+  read(output: Output, asked: SweepOutput): Found {
+    if (asked.quantity === 'groupDelay' || asked.quantity === 'derivative') {
+      return exactDerivative(this.list, asked, this.frequency);
+    }
     switch (output.kind) {
       case 'transfer':
         return this.readTransfer(output.transfer);

@@ -84,9 +84,9 @@ export function sweepSamples(list: ElementList, options: SweepSamplesOptions): S
     for (const place of places) {
       const at = place * sampleCount + sample;
       exact.solveAt(frequencies[place] ?? 0);
-      for (const [index, { re, im, determined }] of traces.entries()) {
+      for (const [index, { output: named, re, im, determined }] of traces.entries()) {
         const output = outputs[index];
-        const found = output === undefined ? undefined : exact.read(output);
+        const found = output === undefined ? undefined : exact.read(output, named);
         re[at] = found?.re ?? 0;
         im[at] = found?.im ?? 0;
         determined[at] = found === undefined ? 0 : 1;

@@ -138,9 +138,9 @@ function runPrepared(
     for (const [place, frequency] of frequencies.entries()) {
       if (doubtful[place] === 0) continue;
       for (const found of exact.solveAt(frequency)) note(problems, found, place);
-      for (const [index, { re, im, determined }] of traces.entries()) {
+      for (const [index, { output: named, re, im, determined }] of traces.entries()) {
         const output = outputs[index];
-        const found = output === undefined ? undefined : exact.read(output);
+        const found = output === undefined ? undefined : exact.read(output, named);
         re[place] = found?.re ?? 0;
         im[place] = found?.im ?? 0;
         determined[place] = found === undefined ? 0 : 1;
