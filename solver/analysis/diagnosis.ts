@@ -145,18 +145,18 @@ function openWords(network: Network): (id: string) => string {
   };
 }
 
-/** The numbers found no unique solution where the graph saw nothing wrong. */
+/** The numbers found no unique solution, among the equations of some rows, where the graph saw nothing wrong. */
 export function singularProblem(
   network: Network,
   branches: BranchTable,
-  components: readonly Component[],
+  rows: readonly number[],
   freedom: Freedom,
   frequency: number,
 ): Problem {
   const carrying = freedom.currents.filter((row) => branches.form[row] === ADMITTANCE);
   const lossless = carrying.length > 0 && carrying.every((row) => branches.zRe[row] === 0);
   const nodes = names(network, freedom.nodes.length > 0 ? freedom.nodes : nodesOf(network, freedom.currents));
-  const elements = ids(network, freedom.currents.length > 0 ? freedom.currents : rowsOf(components));
+  const elements = ids(network, freedom.currents.length > 0 ? freedom.currents : rows);
   const where = `${listNames(elements)}${nodes.length === 0 ? '' : ` (${nodeWords(nodes)})`}`;
   if (lossless) {
     const what = `${listNames(ids(network, carrying))} resonate without loss at exactly ${frequency} Hz`;
@@ -248,7 +248,8 @@ export function notReliableProblem(network: Network, nodes: readonly number[], r
   );
 }
 
-function rowsOf(components: readonly Component[]): number[] {
+/** The rows of components that conduct or have an equation. */
+export function rowsOf(components: readonly Component[]): number[] {
   return components.flatMap(({ admittances, equations }) => [...admittances, ...equations]);
 }
 

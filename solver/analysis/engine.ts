@@ -1,10 +1,10 @@
-import { BranchTable } from '../elements/branch-table';
+import type { BranchTable } from '../elements/branch-table';
 import type { ElementList } from '../elements/element-list';
 import { noReferenceProblem, notReliableProblem } from './diagnosis';
 import type { LinkedForm } from './linked-system';
 import { prepareLinkedSystem, solveLinkedSystem } from './linked-system';
 import type { Network } from './network';
-import { REFERENCE, rowOf, toNetwork } from './network';
+import { branchTableOf, REFERENCE, toNetwork } from './network';
 import { NodalForm } from './nodal-form';
 import type { Problem } from './problem';
 import { silenceQuietBlocks } from './quiet-blocks';
@@ -37,11 +37,7 @@ export class Engine {
   constructor(list: ElementList) {
     this.network = toNetwork(list);
     const { network } = this;
-    this.branches = new BranchTable(network.laws, (row, port) =>
-      typeof port === 'number'
-        ? (network.rowStart[network.elementOf[row] ?? 0] ?? 0) + port
-        : Math.max(0, rowOf(network, port.element)),
-    );
+    this.branches = branchTableOf(network);
     this.readings = new Readings(network.nodeNames.length, network.rowCount);
   }
 

@@ -1,3 +1,4 @@
+import { BranchTable } from '../elements/branch-table';
 import type { Element, ElementList } from '../elements/element-list';
 import { REFERENCE_NODE } from '../elements/element-list';
 import type { Law } from '../elements/law';
@@ -74,6 +75,14 @@ export function rowOf({ elementIndex, rowStart }: Network, id: string, port = 0)
   if (place === undefined) return -1;
   const row = (rowStart[place] ?? 0) + port;
   return port >= 0 && Number.isInteger(port) && row < (rowStart[place + 1] ?? 0) ? row : -1;
+}
+
+/** The forms of a network's rows, to be evaluated at a frequency. */
+export function branchTableOf(network: Network): BranchTable {
+  const { laws, rowStart, elementOf } = network;
+  return new BranchTable(laws, (row, port) =>
+    typeof port === 'number' ? (rowStart[elementOf[row] ?? 0] ?? 0) + port : Math.max(0, rowOf(network, port.element)),
+  );
 }
 
 /** The element that a row is a port of. */

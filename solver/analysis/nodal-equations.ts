@@ -3,7 +3,7 @@ import type { Element, ElementList } from '../elements/element-list';
 import type { Law, Tabulated } from '../elements/law';
 import { ExtendedVector } from '../linear/extended';
 import { elementAt, rowOf } from './network';
-import type { Problem } from './problem';
+import type { Problem, ProblemKind } from './problem';
 import { isProblem, problem } from './problem';
 import { BY_ADMITTANCE, BY_BRANCH, BY_SOURCE } from './response-layout';
 import { ResponseOperator } from './response-operator';
@@ -66,7 +66,7 @@ export function nodalEquations(list: ElementList, frequency: number): NodalEquat
   // Equations without a unique solution can be written all the same; those that contradict each other cannot, as one of
   // them would have been left out for following from the others.
   const failed = stuck ?? operator.exciteSources(new ExtendedVector());
-  if (failed !== undefined && failed.kind !== 'singular') return failed;
+  if (failed !== undefined && !WITHOUT_UNIQUE_SOLUTION.has(failed.kind)) return failed;
   const writer = new Writer(operator);
   const equations = writer.write();
   if (equations.some(({ terms, right }) => [...terms, right].some(({ re, im }) => !Number.isFinite(re) || !Number.isFinite(im)))) {
@@ -74,6 +74,8 @@ export function nodalEquations(list: ElementList, frequency: number): NodalEquat
   }
   return { ok: true, frequency, unknowns: writer.unknowns(), equations };
 }
+
+const WITHOUT_UNIQUE_SOLUTION: ReadonlySet<ProblemKind> = new Set(['singular', 'resonance', 'noFeedback']);
 
 class Writer {
   private readonly elements: ReadonlyMap<string, Element>;

@@ -153,6 +153,8 @@ export function noiseTotal(list: ElementList, pair: PortNodes, band: NoiseBand):
 /** Writes 4kT·(what it is per kT) of one element: V²/Hz at the output. */
 interface NoiseSource {
   readonly element: string;
+  /** The ports at which it drives the network. */
+  readonly rows: readonly number[];
   readonly square: (operator: ResponseOperator, adjoint: ExtendedVector) => number;
 }
 
@@ -190,6 +192,11 @@ class NoiseMeter {
     const { operator, adjoint, temperature } = this;
     const found = operator.prepare(frequency) ?? operator.adjoint(operator.voltageForm(this.plus, this.minus), adjoint);
     if (found !== undefined) return found;
+    const { resonantDuals } = operator;
+    const isDriven = this.sources.some(({ rows }) =>
+      rows.some((row) => resonantDuals.some((dual) => operator.multiplier(dual, row).some((part) => part !== 0))),
+    );
+    if (isDriven) return operator.drivenProblem();
     let sum = 0;
     for (const [place, { square }] of this.sources.entries()) {
       const value = 4 * BOLTZMANN * temperature * square(operator, adjoint);
@@ -209,22 +216,24 @@ function sourcesOf(operator: ResponseOperator): { sources: readonly NoiseSource[
     const row = network.rowStart[place] ?? 0;
     switch (element.kind) {
       case 'resistor':
-        if (element.resistance > 0) sources.push({ element: element.id, square: resistanceAt(row, element.resistance) });
+        if (element.resistance > 0) sources.push({ element: element.id, rows: [row], square: resistanceAt(row, element.resistance) });
         else if (element.resistance < 0) notCounted.push(element.id);
         return;
       case 'impedance':
-        sources.push({ element: element.id, square: impedanceAt(row) });
+        sources.push({ element: element.id, rows: [row], square: impedanceAt(row) });
         if (element.points.some(({ resistance }) => resistance < 0)) notCounted.push(element.id);
         return;
       case 'line':
-        if (element.loss !== undefined && element.loss > 0) sources.push({ element: element.id, square: wavesAt(row, element.impedance) });
+        if (element.loss !== undefined && element.loss > 0) {
+          sources.push({ element: element.id, rows: [row, row + 1], square: wavesAt(row, element.impedance) });
+        }
         return;
       case 'twoPort': {
         const isPassive = element.points.every((point) => {
           const { m11, m22, m12Re, m12Im } = correlationOf([point.s11, point.s12, point.s21, point.s22]);
           return m11 >= -ROUNDING && m22 >= -ROUNDING && m11 * m22 - m12Re ** 2 - m12Im ** 2 >= -ROUNDING;
         });
-        if (isPassive) sources.push({ element: element.id, square: wavesAt(row, element.reference) });
+        if (isPassive) sources.push({ element: element.id, rows: [row, row + 1], square: wavesAt(row, element.reference) });
         else notCounted.push(element.id);
         return;
       }

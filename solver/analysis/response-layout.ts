@@ -14,13 +14,24 @@ export const BY_NOTHING = 3;
 
 /** Why a row of the matrix was replaced by "this unknown is nothing": the row follows from others. */
 export interface Pin {
-  /** `part`: a current law of a part that floats; `loop`: the voltage law of an ideal connection that closes a loop. */
-  readonly cause: 'part' | 'loop';
+  /**
+   * - `part`: the current law of a node of a part that floats.
+   * - `loop`: the voltage law of an ideal connection that closes a loop.
+   * - `dependence`: an equation that follows from others by the numbers of one frequency.
+   */
+  readonly cause: 'part' | 'loop' | 'dependence';
+  readonly row: number;
   readonly unknown: number;
   /** Where the row that was replaced stands, beyond the size. */
   readonly outerRow: number;
-  /** The pinned node, or the row of the port in the network. */
+  /** The pinned node, or the row of the port in the network; −1 for a dependence. */
   readonly of: number;
+}
+
+/** A row of the matrix that follows from others at one frequency, and an unknown that is left free by that. */
+export interface Dependence {
+  readonly row: number;
+  readonly unknown: number;
 }
 
 /** A sensed current that a source gives: it belongs on the right-hand side. */
@@ -44,13 +55,13 @@ export class ResponseLayout {
   readonly form: Uint8Array;
   /** The unknown that is a port's current; −1 where none is. */
   readonly branchOf: Int32Array;
-  /** The row of the matrix with a port's equation; beyond the size where it was replaced, −1 where there is none. */
-  readonly equationOf: Int32Array;
   readonly pins: readonly Pin[];
   /** Parts of the network that currents join, by node; the reference node's is that of `REFERENCE`. */
   readonly partOf: Int32Array;
   /** Whether an equation holds the voltage between two parts. */
   readonly isCrossed: boolean;
+  /** Where each row of the equations is written to: itself, or beyond the size. */
+  private readonly writtenTo: Int32Array;
   private readonly constant: Float64Array;
   private readonly slope: Float64Array;
   private readonly inverse: Float64Array;
@@ -61,17 +72,23 @@ export class ResponseLayout {
   private readonly tableIm: Float64Array;
   private readonly sensedSources: readonly SensedSource[];
 
+  /**
+   * @param isExpanded whether the current of every port that conducts is an unknown, so that no two values are added up
+   * @param dependences rows that are left out for following from others
+   */
   constructor(
     readonly network: Network,
     readonly isDirect: boolean,
+    readonly isExpanded = false,
+    dependences: readonly Dependence[] = [],
   ) {
-    const built = new Builder(network, isDirect);
+    const built = new Builder(network, isDirect, isExpanded, dependences);
     const { entries } = built;
     const numbers = (of: (entry: Entry) => number): Float64Array => Float64Array.from(entries, of);
     this.size = built.size;
     this.form = built.form;
     this.branchOf = built.branchOf;
-    this.equationOf = built.equationOf;
+    this.writtenTo = built.writtenTo;
     this.pins = built.pins;
     this.partOf = built.partOf;
     this.isCrossed = built.isCrossed;
@@ -123,13 +140,13 @@ export class ResponseLayout {
    * hold the rows beyond the size.
    */
   addSource(row: number, re: number, im: number, bRe: Float64Array, bIm: Float64Array): void {
-    const { network, form, equationOf } = this;
+    const { network, form, branchOf, writtenTo } = this;
     const add = (to: number, sign: number, re1: number, im1: number): void => {
       bRe[to] = (bRe[to] ?? 0) + sign * re1;
       bIm[to] = (bIm[to] ?? 0) + sign * im1;
     };
     if (form[row] === BY_BRANCH) {
-      add(equationOf[row] ?? 0, 1, re, im);
+      add(writtenTo[branchOf[row] ?? 0] ?? 0, 1, re, im);
       return;
     }
     this.addCurrent(network.first[row] ?? 0, -1, re, im, bRe, bIm);
@@ -143,8 +160,7 @@ export class ResponseLayout {
   /** Adds a current that is sent into a node. */
   addCurrent(node: number, sign: number, re: number, im: number, bRe: Float64Array, bIm: Float64Array): void {
     if (node === REFERENCE) return;
-    const pin = this.pins.find(({ cause, of }) => cause === 'part' && of === node);
-    const row = pin?.outerRow ?? node - 1;
+    const row = this.writtenTo[node - 1] ?? node - 1;
     bRe[row] = (bRe[row] ?? 0) + sign * re;
     bIm[row] = (bIm[row] ?? 0) + sign * im;
   }
@@ -174,28 +190,27 @@ class Builder {
   readonly size: number;
   readonly form: Uint8Array;
   readonly branchOf: Int32Array;
-  readonly equationOf: Int32Array;
   readonly partOf: Int32Array;
   readonly pins: Pin[] = [];
   readonly entries: Entry[] = [];
   readonly tables: { at: Tabulated; row: number }[] = [];
   readonly sensedSources: SensedSource[] = [];
   isCrossed = false;
-  /** Where each row of the equations is written to: itself, or beyond the size. */
-  private readonly writtenTo: Int32Array;
+  readonly writtenTo: Int32Array;
 
   constructor(
     private readonly network: Network,
     private readonly isDirect: boolean,
+    isExpanded: boolean,
+    dependences: readonly Dependence[],
   ) {
     const { rowCount, nodeNames, laws } = network;
     this.form = new Uint8Array(rowCount);
     this.branchOf = new Int32Array(rowCount).fill(-1);
-    this.equationOf = new Int32Array(rowCount).fill(-1);
     const sensed = this.sensedRows();
     let unknown = nodeNames.length - 1;
     laws.forEach((law, row) => {
-      this.form[row] = formOf(law, sensed.has(row), isDirect);
+      this.form[row] = formOf(law, isExpanded || sensed.has(row), isDirect);
       if (this.form[row] === BY_BRANCH) this.branchOf[row] = unknown++;
     });
     this.size = unknown;
@@ -203,6 +218,7 @@ class Builder {
     this.partOf = this.findParts();
     this.pinParts();
     this.pinLoops();
+    for (const { row, unknown: free } of dependences) this.pin('dependence', row, free, -1);
     for (const [row, law] of laws.entries()) this.write(row, law);
   }
 
@@ -237,7 +253,7 @@ class Builder {
     for (let node = 1; node < this.partOf.length; node++) {
       if (pinned.has(this.partOf[node])) continue;
       pinned.add(this.partOf[node]);
-      this.pin('part', node - 1, node);
+      this.pin('part', node - 1, node - 1, node);
     }
   }
 
@@ -249,7 +265,7 @@ class Builder {
     const isGiven = (row: number): number => (network.laws[row]?.law === 'voltage' ? 0 : 1);
     for (const row of shorts.sort((a, b) => isGiven(a) - isGiven(b))) {
       if (joined.union(network.first[row] ?? 0, network.second[row] ?? 0)) continue;
-      this.pin('loop', branchOf[row] ?? 0, row);
+      this.pin('loop', branchOf[row] ?? 0, branchOf[row] ?? 0, row);
     }
   }
 
@@ -274,11 +290,11 @@ class Builder {
     return 'constant' in coefficient && coefficient.constant === 0 && (this.isDirect || coefficient.slope === 0);
   }
 
-  private pin(cause: Pin['cause'], unknown: number, of: number): void {
+  private pin(cause: Pin['cause'], row: number, unknown: number, of: number): void {
     const outerRow = this.size + this.pins.length;
-    this.pins.push({ cause, unknown, outerRow, of });
-    this.writtenTo[unknown] = outerRow;
-    this.entries.push({ row: unknown, column: unknown, ...ONE });
+    this.pins.push({ cause, row, unknown, outerRow, of });
+    this.writtenTo[row] = outerRow;
+    this.entries.push({ row, column: unknown, ...ONE });
   }
 
   private add(row: number, column: number, value: Value): void {
@@ -309,7 +325,6 @@ class Builder {
     }
     if (form[row] !== BY_BRANCH) return;
     const branch = this.branchOf[row] ?? -1;
-    this.equationOf[row] = this.writtenTo[branch] ?? branch;
     if (a !== b) {
       this.add(a, branch, ONE);
       this.add(b, branch, negative(ONE));
@@ -372,14 +387,14 @@ class Builder {
   }
 }
 
-function formOf(law: Law, isSensed: boolean, isDirect: boolean): number {
+function formOf(law: Law, hasBranch: boolean, isDirect: boolean): number {
   switch (law.law) {
     case 'resistance':
-      return isSensed ? BY_BRANCH : BY_ADMITTANCE;
+      return hasBranch ? BY_BRANCH : BY_ADMITTANCE;
     case 'capacitance':
-      return isDirect ? BY_NOTHING : isSensed ? BY_BRANCH : BY_ADMITTANCE;
+      return isDirect ? BY_NOTHING : hasBranch ? BY_BRANCH : BY_ADMITTANCE;
     case 'inductance':
-      return isDirect || isSensed ? BY_BRANCH : BY_ADMITTANCE;
+      return isDirect || hasBranch ? BY_BRANCH : BY_ADMITTANCE;
     case 'impedance':
     case 'voltage':
     case 'short':

@@ -9,7 +9,8 @@ import type { Problem } from './problem';
 import { isProblem, problem } from './problem';
 import { ProblemPlaces } from './problem-places';
 import { BY_ADMITTANCE, BY_BRANCH, BY_SOURCE } from './response-layout';
-import type { LinearForm } from './response-operator';
+import type { LinearForm } from './response-equations';
+import { isMovedBy } from './response-equations';
 import { ResponseOperator } from './response-operator';
 import type { SweepProblem } from './sweep';
 import type { Effect, ValueEffects, ValueField } from './value-fields';
@@ -175,6 +176,20 @@ function resolve(network: Network, output: SensitivityOutput): Asked | Problem {
   }
 }
 
+/** A sum with the sizes of its terms. */
+interface Bilinear {
+  readonly re: number;
+  readonly im: number;
+  readonly size: number;
+}
+
+/** So small against its terms, a sum is nothing but rounding. */
+const ROUNDING = 1e-10;
+
+function isRounding({ re, im, size }: Bilinear): boolean {
+  return Math.abs(re) + Math.abs(im) <= ROUNDING * size;
+}
+
 /** The output and its adjoint at one frequency. */
 class Derivative {
   private readonly x = new ExtendedVector();
@@ -210,34 +225,85 @@ class Derivative {
     return this.operator.valueOf(this.form, this.x);
   }
 
-  /** ∂H/∂p for a value of the element whose first port has the row; undefined where it is not determined. */
+  /**
+   * ∂H/∂p for a value of the element whose first port has the row; undefined where it is not determined.
+   *
+   * At a resonance without losses the solution is x + α·n with any α, but a change of p leaves only one of them: the
+   * equation that followed from the others, with multipliers m, asks that m·dA·(x + α·n) = 0.
+   */
   by(value: ValueEffects, row: number): readonly [number, number] | undefined {
-    let sumRe = 0;
-    let sumIm = 0;
-    for (const effect of value.effects(this.operator.frequency)) {
-      const part = effect.of === 'term' ? this.byTerm(row, effect) : this.byImmittance(row + effect.port, effect);
-      if (part === undefined) return undefined;
-      sumRe += part[0];
-      sumIm += part[1];
-    }
-    return [sumRe, sumIm];
+    const { x, adjoint, operator } = this;
+    const along = this.along(value, row, adjoint, x);
+    if (along === undefined) return undefined;
+    const { resonantModes: modes, resonantDuals: duals } = operator;
+    const [mode, ...others] = modes;
+    const [dual] = duals;
+    if (mode === undefined || dual === undefined) return [along.re, along.im];
+    const onOutput = modes.map((one) => this.along(value, row, adjoint, one));
+    const onEquation = duals.map((one) => this.along(value, row, one, x));
+    if ([...onOutput, ...onEquation].every((part) => part === undefined || isRounding(part))) return [along.re, along.im];
+    const [a, g, d] = [onOutput[0], onEquation[0], this.along(value, row, dual, mode)];
+    if (others.length > 0 || a === undefined || g === undefined || d === undefined || isRounding(d)) return undefined;
+    const square = d.re * d.re + d.im * d.im;
+    const alphaRe = -(g.re * d.re + g.im * d.im) / square;
+    const alphaIm = -(g.im * d.re - g.re * d.im) / square;
+    return [along.re + alphaRe * a.re - alphaIm * a.im, along.im + alphaRe * a.im + alphaIm * a.re];
   }
 
-  /** Ports whose currents are not determined. */
+  /** −(multipliers)·(what the value does to the matrix)·(solution), and what is read from the element itself. */
+  private along(value: ValueEffects, row: number, adjoint: ExtendedVector, x: ExtendedVector): Bilinear | undefined {
+    const sum = { re: 0, im: 0, size: 0 };
+    for (const effect of value.effects(this.operator.frequency)) {
+      const part =
+        effect.of === 'term' ? this.byTerm(row, effect, adjoint, x) : this.byImmittance(row + effect.port, effect, adjoint, x);
+      if (part === undefined) return undefined;
+      sum.re += part[0];
+      sum.im += part[1];
+      sum.size += this.sizeOf(row, effect, adjoint, x, part);
+    }
+    return sum;
+  }
+
+  /** The size of a part before the voltage of a port came out as the difference of its nodes'. */
+  private sizeOf(
+    row: number,
+    effect: Effect,
+    adjoint: ExtendedVector,
+    x: ExtendedVector,
+    [re, im]: readonly [number, number],
+  ): number {
+    const { operator } = this;
+    const size = Math.abs(re) + Math.abs(im);
+    if (effect.of !== 'capacitance' && !(effect.of === 'term' && effect.term.of === 'voltage')) return size;
+    const own = row + effect.port;
+    const port = effect.of === 'term' && typeof effect.term.port === 'number' ? row + effect.term.port : own;
+    const [mRe, mIm] = operator.multiplier(adjoint, own);
+    const by = effect.of === 'term' ? Math.abs(effect.by[0]) + Math.abs(effect.by[1]) : operator.omega * Math.abs(effect.by);
+    const { first, second } = operator.network;
+    const volts = [(first[port] ?? 0) - 1, (second[port] ?? 0) - 1].reduce(
+      (total, at) => total + (at < 0 ? 0 : Math.abs(x.re[at] ?? 0) + Math.abs(x.im[at] ?? 0)),
+      0,
+    );
+    return Math.max(size, by * (Math.abs(mRe) + Math.abs(mIm)) * volts);
+  }
+
+  /** Ports whose currents a loop of ideal connections leaves free. */
   private freeRows(): ReadonlySet<number> {
     const { operator } = this;
     const { pins, form } = operator.layout;
     if (!pins.some(({ cause }) => cause === 'loop') && !operator.layout.isCrossed) return new Set();
+    const modes = operator.structuralModes;
     return new Set(
       operator.network.laws.flatMap((_, row) =>
-        form[row] === BY_BRANCH && operator.freedomOf(operator.currentForm(row)) !== undefined ? [row] : [],
+        form[row] === BY_BRANCH && modes.some((mode) => isMovedBy(operator.currentForm(row), mode)) ? [row] : [],
       ),
     );
   }
 
-  private currentOf(row: number): readonly [number, number] {
-    const { operator, x } = this;
+  private currentOf(row: number, x = this.x): readonly [number, number] {
+    const { operator } = this;
     if (operator.layout.form[row] !== BY_SOURCE) return operator.portCurrent(x, row);
+    if (x !== this.x) return [0, 0];
     const { drive } = this.asked;
     if (drive !== 'sources') return 'source' in drive && drive.source === row ? [1, 0] : [0, 0];
     const law = operator.network.laws[row];
@@ -245,20 +311,30 @@ class Derivative {
   }
 
   /** −(multiplier)·(what the coefficient multiplies)·(its change). */
-  private byTerm(row: number, { port, term, by }: Extract<Effect, { of: 'term' }>): readonly [number, number] | undefined {
+  private byTerm(
+    row: number,
+    { port, term, by }: Extract<Effect, { of: 'term' }>,
+    adjoint: ExtendedVector,
+    x: ExtendedVector,
+  ): readonly [number, number] | undefined {
     if (by[0] === 0 && by[1] === 0) return [0, 0];
-    const { operator, x, adjoint } = this;
+    const { operator } = this;
     const target = typeof term.port === 'number' ? row + term.port : rowOf(operator.network, term.port.element);
     if (term.of === 'current' && this.free.has(target)) return undefined;
-    const [qRe, qIm] = term.of === 'voltage' ? operator.portVoltage(x, target) : this.currentOf(target);
+    const [qRe, qIm] = term.of === 'voltage' ? operator.portVoltage(x, target) : this.currentOf(target, x);
     const [mRe, mIm] = operator.multiplier(adjoint, row + port);
     const re = mRe * qRe - mIm * qIm;
     const im = mRe * qIm + mIm * qRe;
     return [-(re * by[0] - im * by[1]), -(re * by[1] + im * by[0])];
   }
 
-  private byImmittance(row: number, effect: Exclude<Effect, { of: 'term' }>): readonly [number, number] | undefined {
-    const { operator, x, adjoint, asked } = this;
+  private byImmittance(
+    row: number,
+    effect: Exclude<Effect, { of: 'term' }>,
+    adjoint: ExtendedVector,
+    x: ExtendedVector,
+  ): readonly [number, number] | undefined {
+    const { operator, asked } = this;
     const { omega } = operator;
     const isBranch = operator.layout.form[row] === BY_BRANCH;
     const isReadHere = asked.reading.kind === 'current' && asked.reading.row === row && !isBranch;

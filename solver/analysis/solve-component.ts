@@ -5,6 +5,7 @@ import {
   floatingProblem,
   noDataProblem,
   rangeProblem,
+  rowsOf,
   singularProblem,
   tooLargeProblem,
   voltageLoopProblem,
@@ -88,7 +89,7 @@ export function solveComponent(
     const outcome = solveInBranchForm(network, asSystem(component), branches, readings);
     if (outcome === 'tooLarge') return { solved: false, problems: [tooLargeProblem(network, [component], frequency)] };
     if (outcome !== 'solved') {
-      problems.push(singularProblem(network, branches, [component], outcome, frequency));
+      problems.push(singularProblem(network, branches, rowsOf([component]), outcome, frequency));
       if (!outcome.consistent) return { solved: false, problems };
       for (const node of outcome.nodes) unknown.nodes.add(node);
       for (const row of outcome.currents) unknown.currents.add(row);

@@ -1,4 +1,4 @@
-import { Complex } from 'complex.js';
+import type { Complex } from 'complex.js';
 import type { Element, ElementList } from '../elements/element-list';
 import { sameFrequency } from '../elements/source-value';
 import { validateElementList } from '../elements/validate-element-list';

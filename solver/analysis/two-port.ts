@@ -134,6 +134,10 @@ function solveAt(
   if (stuck !== undefined) return stuck;
   const { nodeIndex, rowCount } = operator.network;
   const nodes = ports.map((pair) => pair.map((node) => nodeIndex.get(node) ?? 0));
+  for (const [plus = 0, minus = 0] of nodes) {
+    const free = operator.freedomOf(operator.voltageForm(plus, minus));
+    if (free !== undefined) return free;
+  }
   for (let driven = 0; driven < 2; driven++) {
     const [plus = 0, minus = 0] = nodes[driven] ?? [];
     const found = operator.inject(plus, minus, x);

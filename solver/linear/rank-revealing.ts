@@ -39,6 +39,9 @@ export interface DenseOutcome {
   readonly error: Float64Array;
   /** A basis of what may be added to a solution; empty at full rank. */
   readonly nullVectors: readonly NullVector[];
+  /** The equations that follow from the others, and the unknowns that they leave free: as many, in no order. */
+  readonly dependentRows: Int32Array;
+  readonly freeColumns: Int32Array;
 }
 
 /** Solves the system, or says in which directions it has no unique solution. */
@@ -60,7 +63,7 @@ export function solveDense(system: DenseSystem): DenseOutcome {
   for (let free = rank; free < size; free++) {
     nullVectors.push(backSubstitute(system, rowOf, columnOf, rank, columnOf[free] ?? 0));
   }
-  return { rank, consistent, ...solution, error: bound, nullVectors };
+  return { rank, consistent, ...solution, error: bound, nullVectors, dependentRows: rowOf.slice(rank), freeColumns: columnOf.slice(rank) };
 }
 
 /** Finds the pivot of step k and eliminates with it; false when no entry that remains can be told from zero. */

@@ -22,6 +22,7 @@ export class CoordinateMatrix {
   readonly sumIm: Float64Array;
   /** The place of each contribution. */
   private readonly placeOf: Int32Array;
+  private sizes: Float64Array | undefined;
   constructor(
     size: number,
     readonly row: Int32Array,
@@ -66,5 +67,24 @@ export class CoordinateMatrix {
       sumRe[place] = (sumRe[place] ?? 0) + (re[at] ?? 0);
       sumIm[place] = (sumIm[place] ?? 0) + (im[at] ?? 0);
     }
+  }
+
+  /** The smallest sum against the sizes of what was added up: about ε where contributions cancel but for rounding. */
+  cancellation(): number {
+    const { re, im, sumRe, sumIm, placeOf } = this;
+    this.sizes ??= new Float64Array(sumRe.length);
+    const { sizes } = this;
+    sizes.fill(0);
+    for (let at = 0; at < placeOf.length; at++) {
+      const place = placeOf[at] ?? -1;
+      if (place >= 0) sizes[place] = (sizes[place] ?? 0) + Math.abs(re[at] ?? 0) + Math.abs(im[at] ?? 0);
+    }
+    let smallest = 1;
+    for (let place = 0; place < sizes.length; place++) {
+      const size = sizes[place] ?? 0;
+      const sum = Math.abs(sumRe[place] ?? 0) + Math.abs(sumIm[place] ?? 0);
+      if (sum < smallest * size) smallest = sum / size;
+    }
+    return smallest;
   }
 }

@@ -162,7 +162,7 @@ describe('ResponseOperator', () => {
       'a lossless resonance',
       network(currentSource('J', '0', 'a', 1), capacitor('C', 'a', '0', 1), inductor('L', 'a', '0', 1 / (2 * Math.PI) ** 2)),
       1,
-      'singular',
+      'resonance',
     ],
     [
       'an amplifier without feedback',
@@ -173,7 +173,7 @@ describe('ResponseOperator', () => {
         resistor('RL', 'o', '0', 1),
       ),
       50,
-      'singular',
+      'noFeedback',
     ],
     [
       'a table that does not reach',
