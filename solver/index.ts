@@ -61,6 +61,9 @@ export { impulseResponse, stepResponse } from './analysis/time-response';
 
 export type { Band } from './features/response';
 export { HALF_POWER_DECIBELS } from './features/response';
+export type { ResponseFunction } from './features/response';
+export type { NetworkResponse } from './features/network-response';
+export { networkResponse } from './features/network-response';
 export type { Hint } from './features/hints';
 export { hintsOf } from './features/hints';
 export type { Scan, ScanOptions } from './features/scan';

@@ -1,3 +1,5 @@
+import type { Hint } from './hints';
+
 /**
  * A response as the features see it: a complex number as a function of the frequency. Where it comes from (a sweep, a
  * transfer function, a measurement that is interpolated) is nobody's business here; it has to be smooth between its
@@ -12,6 +14,8 @@ export interface ResponseFunction {
     readonly im: Float64Array;
     readonly determined: Uint8Array;
   };
+  /** Where it may change over less than a grid steps over, where that is known. */
+  readonly hints?: readonly Hint[];
 }
 
 /** From where to where, hertz, 0 < low < high. */

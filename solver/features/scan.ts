@@ -6,7 +6,7 @@ import type { Band, ResponseFunction } from './response';
 export interface ScanOptions extends Band {
   /** Points of the grid in a decade, before it is made finer where the response asks for it; 60 if not given. */
   readonly perDecade?: number;
-  /** What the grid must not step over; from poles and zeros, see `hintsOf`. */
+  /** What the grid must not step over, see `hintsOf`; those of the response itself if not given. */
   readonly hints?: readonly Hint[];
 }
 
@@ -35,7 +35,7 @@ const COS_TURN = Math.cos((TURN * Math.PI) / 180);
 
 /** Evaluates a response over a band, more closely where it needs it. Costs the grid and some points a resonance. */
 export function scanResponse(response: ResponseFunction, options: ScanOptions): Scan | Problem {
-  const { low, high, perDecade = PER_DECADE, hints = [] } = options;
+  const { low, high, perDecade = PER_DECADE, hints = response.hints ?? [] } = options;
   if (!(low > 0) || !(high > low) || !Number.isFinite(high)) {
     return problem('invalid', [], [], 'A band needs a lower frequency above 0 Hz and a higher one above that. Give two such frequencies.');
   }
