@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { Element, ElementList } from '@/solver';
+import type { Element, ElementList, NetworkReading } from '@/solver';
 import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
 import { capacitor, currentSource, inductor, network, resistor, voltageSource } from './support/networks';
 import { amplifier, buffer, expectRoots, found, refused, toNode } from './support/roots';
@@ -232,6 +232,23 @@ describe('what a transfer function does not show', () => {
     // Two separate circuits share the reference node and nothing else.
     const apart = network(voltageSource('V1', 's', '0', 1), resistor('R1', 's', '0', 10), resistor('R2', 'x', '0', 10), capacitor('C2', 'x', '0', 1e-6));
     expect(found(polesAndZeros(apart, toNode('x'))).gain).toBe(0);
+  });
+});
+
+describe('what a transfer function may give', () => {
+  it('is a voltage of a node, between two, or of a port, or a current, as all analyses name them', () => {
+    const coils: Element = { id: 'K', kind: 'coupledInductors', nodes: ['a', '0', 'b', 'c'], inductances: [1e-3, 4e-3], coupling: 0.9 };
+    const list = network(voltageSource('V1', 's', '0', 1), resistor('R1', 's', 'a', 10), coils, resistor('R2', 'b', 'c', 50), capacitor('C', 'c', '0', 1e-9));
+    const of = (output: NetworkReading) => found(polesAndZeros(list, { kind: 'transfer', source: 'V1', output }));
+    const between = of({ quantity: 'voltageBetween', nodes: ['b', 'c'] });
+    expect(of({ quantity: 'elementVoltage', element: 'R2' })).toEqual(between);
+    expect(of({ quantity: 'elementVoltage', element: 'K', port: 1 })).toEqual(between);
+    expect(of({ quantity: 'elementVoltage', element: 'K' })).toEqual(of({ quantity: 'voltage', node: 'a' }));
+    const gainOf = (output: NetworkReading): number => (of(output).gain ?? NaN) / (between.gain ?? NaN);
+    expect(gainOf({ quantity: 'current', element: 'R2' }) * 50).toBeCloseTo(1, 12);
+    expect(gainOf({ quantity: 'current', element: 'K', port: 1 }) * -50).toBeCloseTo(1, 12);
+    const refusal = polesAndZeros(list, { kind: 'transfer', source: 'V1', output: { quantity: 'elementVoltage', element: 'K', port: 2 } });
+    expect(refused(refusal).message).toMatch(/K has no port 2/);
   });
 });
 

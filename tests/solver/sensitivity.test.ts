@@ -115,6 +115,18 @@ describe('sensitivity', () => {
     }
   });
 
+  it('is of the voltage of a port as of that between its nodes', () => {
+    const list = network(
+      voltageSource('E', 'a', '0', 1),
+      resistor('R1', 'a', 'b', 10),
+      { id: 'K', kind: 'coupledInductors', nodes: ['b', '0', 'c', 'd'], inductances: [1e-3, 2e-3], coupling: 0.3 },
+      resistor('R2', 'c', 'd', 20),
+    );
+    const between = found(list, { quantity: 'voltageBetween', nodes: ['c', 'd'] }, 1000);
+    expect(found(list, { quantity: 'elementVoltage', element: 'K', port: 1 }, 1000)).toEqual(between);
+    expect(found(list, { quantity: 'transfer', source: 'E', reading: { quantity: 'elementVoltage', element: 'R2' } }, 1000)).toEqual(between);
+  });
+
   const sum = (traces: readonly SensitivityTrace[], fields: Readonly<Record<string, number>>): readonly [number, number] => {
     let re = 0;
     let im = 0;
