@@ -44,6 +44,8 @@ export { sourceFrequencies, superpose, valueAt } from './analysis/superposition'
 export type { PreparedSweep, Sweep, SweepOptions, SweepProblem, SweepTrace } from './analysis/sweep';
 export { prepareSweep, sweep } from './analysis/sweep';
 export type { SweepOutput, SweepTransfer } from './analysis/sweep-output';
+export type { SampledSweep, SamplesTrace, SweepSamplesOptions } from './analysis/sweep-samples';
+export { sweepSamples } from './analysis/sweep-samples';
 export { linearFrequencies, listedFrequencies, logarithmicFrequencies } from './analysis/frequency-grid';
 
 export type {
@@ -59,9 +61,8 @@ export { partialFractions } from './analysis/partial-fractions';
 export type { TimeResponse, TimeValues } from './analysis/time-response';
 export { impulseResponse, stepResponse } from './analysis/time-response';
 
-export type { Band } from './features/response';
+export type { Band, ResponseFunction } from './features/response';
 export { HALF_POWER_DECIBELS } from './features/response';
-export type { ResponseFunction } from './features/response';
 export type { NetworkResponse } from './features/network-response';
 export { networkResponse } from './features/network-response';
 export type { Hint } from './features/hints';
