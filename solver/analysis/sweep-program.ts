@@ -19,8 +19,8 @@ const SAMPLES = 3;
  */
 export class SweepProgram {
   private readonly shape: string;
-  private readonly usual: SweepTape | undefined;
-  private readonly alternatives: SweepTape[] = [];
+  private usual: SweepTape | 'none' | undefined;
+  private readonly alternatives: (SweepTape | 'none')[] = [];
 
   /** @param levelOf the level of a row's numbers */
   constructor(
@@ -29,7 +29,6 @@ export class SweepProgram {
     private readonly levelOf: (row: number) => Level = () => LEVEL.constant,
   ) {
     this.shape = shapeOf(network.laws);
-    this.usual = compileSweep(network, outputs, levelOf);
   }
 
   /** Whether the same program serves other laws of the same network. */
@@ -39,11 +38,12 @@ export class SweepProgram {
 
   /** Runs over frequencies; marks in `doubtful` the places that are left to the exact engine. */
   run(laws: readonly Law[], frequencies: Float64Array, arrays: readonly OutputArrays[], doubtful: Uint8Array): void {
-    if (this.usual === undefined) {
+    const usual = this.usualFor(laws, frequencies);
+    if (usual === 'none') {
       doubtful.fill(OUTSIDE);
       return;
     }
-    runOverPoints(this.usual, laws, { frequencies }, arrays, doubtful);
+    runOverPoints(usual, laws, { frequencies }, arrays, doubtful);
     if (doubtful.includes(WEAK)) this.runAgain(laws, (place) => frequencies[place] ?? 0, arrays, doubtful);
   }
 
@@ -55,11 +55,12 @@ export class SweepProgram {
     arrays: readonly OutputArrays[],
     doubtful: Uint8Array,
   ): void {
-    if (this.usual === undefined) {
+    const usual = this.usualFor(laws, frequencies);
+    if (usual === 'none') {
       doubtful.fill(OUTSIDE);
       return;
     }
-    runOverSamples(this.usual, laws, frequencies, samples, arrays, doubtful);
+    runOverSamples(usual, laws, frequencies, samples, arrays, doubtful);
     if (!doubtful.includes(WEAK)) return;
     this.runAgain(laws, (at) => frequencies[Math.floor(at / samples.count)] ?? 0, arrays, doubtful, samples);
   }
@@ -77,6 +78,7 @@ export class SweepProgram {
       if (places.length === 0) return;
       const frequencies = Float64Array.from(places, frequencyAt);
       const tape = (this.alternatives[attempt] ??= this.alternativeFor(laws, frequencies));
+      if (tape === 'none') return;
       const points: Points = {
         frequencies,
         samples,
@@ -98,11 +100,32 @@ export class SweepProgram {
     }
   }
 
-  private alternativeFor(laws: readonly Law[], frequencies: Float64Array): SweepTape {
+  private usualFor(laws: readonly Law[], frequencies: Float64Array): SweepTape | 'none' {
+    if (frequencies.length === 0) return 'none';
+    this.usual ??= compileSweep({ ...this.network, laws }, this.outputs, this.levelOf, this.hasEquations ? acrossBand(frequencies) : []) ?? 'none';
+    return this.usual;
+  }
+
+  private alternativeFor(laws: readonly Law[], frequencies: Float64Array): SweepTape | 'none' {
     const step = Math.max(1, Math.floor((frequencies.length - 1) / (SAMPLES - 1)));
     const samples = [...new Set(Array.from({ length: SAMPLES }, (_, k) => frequencies[Math.min(k * step, frequencies.length - 1)] ?? 0))];
-    const tape = compileSweep({ ...this.network, laws }, this.outputs, this.levelOf, samples);
-    if (tape === undefined) throw new Error('a network that was compiled once is not compiled again');
-    return tape;
+    return compileSweep({ ...this.network, laws }, this.outputs, this.levelOf, samples) ?? 'none';
   }
+
+  private get hasEquations(): boolean {
+    return this.network.laws.some(({ law }) => law === 'equation');
+  }
+}
+
+/** Parts of a band, on a logarithmic scale: off its ends and middle, where a person's network is likely to have a resonance. */
+const PARTS = [0.013, 0.237, 0.487, 0.741, 0.981];
+
+function acrossBand(frequencies: Float64Array): number[] {
+  let [low, high] = [Infinity, 0];
+  for (const frequency of frequencies) {
+    if (frequency > 0) low = Math.min(low, frequency);
+    high = Math.max(high, frequency);
+  }
+  if (!(low <= high)) return [];
+  return low === high ? [low] : PARTS.map((part) => low * (high / low) ** part);
 }

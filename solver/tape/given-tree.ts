@@ -33,14 +33,18 @@ export interface GivenTree {
   readonly nodeOf: Int32Array;
 }
 
-/** The trees of a network; undefined where rows of given voltage form a loop. */
-export function growTrees(network: Network): GivenTree | undefined {
+/**
+ * The trees of a network; undefined where rows of given voltage form a loop.
+ *
+ * @param isLeftOut rows that are not to be taken for given voltages, though they are
+ */
+export function growTrees(network: Network, isLeftOut: (row: number) => boolean = () => false): GivenTree | undefined {
   const { first, second, rowCount, nodeNames } = network;
   const nodeCount = nodeNames.length;
   const around: number[][] = Array.from({ length: nodeCount }, () => []);
   const merged = new DisjointSets(nodeCount);
   for (let row = 0; row < rowCount; row++) {
-    if (!isGivenVoltage(network, row)) continue;
+    if (!isGivenVoltage(network, row) || isLeftOut(row)) continue;
     const a = first[row] ?? 0;
     const b = second[row] ?? 0;
     if (a === b) return undefined;

@@ -205,12 +205,17 @@ export class MeshSolution {
     return isFirst ? value : negative(value);
   }
 
+  /** The source current that flows from one vertex of the boundary to another, all else being taken out. */
+  sourceFlow(one: number, other: number): Value {
+    const flow = this.currents.get(this.mesh.graph.slot(one, other)) ?? ZERO;
+    return one < other ? flow : negative(flow);
+  }
+
   /** What flows from one vertex of the boundary to another through all that was taken out. */
   boundaryCurrent(one: number, other: number): Value {
     const { builder, graph } = this.mesh;
-    const slot = graph.slot(one, other);
-    const source = this.currents.get(slot) ?? ZERO;
-    return builder.mulAdd(one < other ? source : negative(source), this.mesh.admittanceOf(slot), this.between(one, other));
+    const admittance = this.mesh.admittanceOf(graph.slot(one, other));
+    return builder.mulAdd(this.sourceFlow(one, other), admittance, this.between(one, other));
   }
 
   private carry(): void {

@@ -2,8 +2,10 @@ import type { Network } from '../analysis/network';
 import type { Phasor } from '../analysis/network-reading';
 import type { Output, Transfer } from '../analysis/sweep-output';
 import type { Law } from '../elements/law';
+import { isAdmittance } from './admittances';
 import { NetworkInputs } from './network-inputs';
-import type { Drive, DriveReadings, Probe } from './nodal-tape';
+import { LinkedTape } from './linked-tape';
+import type { AdjointReadings, Drive, DriveReadings, NetworkTape, Probe } from './network-tape';
 import { NodalTape } from './nodal-tape';
 import type { Level, Part, Value } from './tape-builder';
 import { conjugate, isZero, negative, NOTHING, TapeBuilder, timesJ, ZERO } from './tape-builder';
@@ -25,7 +27,8 @@ const MOST_LAST = 6;
  * Compiles outputs of a network; undefined where its form is one that only the exact engine can do.
  *
  * @param levelOf the level of a row's numbers: constant, or different from lane to lane
- * @param samples frequencies, hertz, at which no pivot may be weak; none for the usual order
+ * @param samples frequencies, hertz, at which no pivot may be weak; none for the usual order. A network with equations has
+ *   none, and needs some
  */
 export function compileSweep(
   network: Network,
@@ -37,7 +40,8 @@ export function compileSweep(
   const inputs = new NetworkInputs(builder, network.laws, levelOf);
   const last = new Set(outputs.flatMap((output) => nodesOf(network, output)));
   const probed = outputs.flatMap((output) => probesOf(network, output));
-  const tape = NodalTape.of(network, inputs, { last: last.size > MOST_LAST ? [] : [...last], probed, samples });
+  const wishes = { last: last.size > MOST_LAST ? [] : [...last], probed, samples };
+  const tape = hasEquations(network) ? LinkedTape.of(network, inputs, wishes) : NodalTape.of(network, inputs, wishes);
   if (tape === undefined) return undefined;
   const values = new SweepWriter(network, inputs, tape).write(outputs);
   const program = compileTape(
@@ -99,8 +103,15 @@ interface Written {
 interface Gradient {
   /** The adjoint's sources. */
   readonly probes: Probe[];
+  readonly currents: Map<number, Value>;
   /** What a row's own admittance in the output adds to the derivative by it: this times the row's voltage. */
   readonly direct: Map<number, Value>;
+}
+
+/** The derivatives of an output by the admittances of rows, and s·∂H/∂s by what else stands beside s. */
+interface Derivatives {
+  readonly byRow: ReadonlyMap<number, Value>;
+  readonly slope: Value;
 }
 
 /**
@@ -114,7 +125,7 @@ class SweepWriter {
   constructor(
     private readonly network: Network,
     private readonly inputs: NetworkInputs,
-    private readonly tape: NodalTape,
+    private readonly tape: NetworkTape,
   ) {}
 
   write(outputs: readonly Output[]): Value[] {
@@ -148,9 +159,9 @@ class SweepWriter {
         case 'transfer':
           return this.written(output.transfer).value;
         case 'groupDelay':
-          return this.groupDelay(output.of, derivatives.get(JSON.stringify(output.of)) ?? new Map<number, Value>());
+          return this.groupDelay(output.of, derivatives.get(JSON.stringify(output.of)));
         case 'derivative':
-          return this.byValue(output.row, derivatives.get(JSON.stringify(output.of))?.get(output.row) ?? ZERO);
+          return this.byValue(output.row, derivatives.get(JSON.stringify(output.of))?.byRow.get(output.row) ?? ZERO);
       }
     });
   }
@@ -216,21 +227,22 @@ class SweepWriter {
   }
 
   /** ∂X/∂y for the rows. */
-  private differentiate(transfer: Transfer, rows: readonly number[]): Map<number, Value> {
+  private differentiate(transfer: Transfer, rows: readonly number[]): Derivatives {
     const { builder } = this;
     const { readings } = this.written(transfer);
-    const gradient: Gradient = { probes: [], direct: new Map() };
+    const gradient: Gradient = { probes: [], currents: new Map(), direct: new Map() };
     this.weigh(transfer, readings, gradient);
-    const adjoint = this.tape.drive(gradient.probes);
+    const adjoint: AdjointReadings = this.tape.adjoint(gradient);
     for (const row of rows) adjoint.wantVoltage(...ends(this.network, row));
     adjoint.solve();
-    return new Map(
+    const byRow = new Map(
       rows.map((row) => {
         const nodes = ends(this.network, row);
         const effect = builder.sub(gradient.direct.get(row) ?? ZERO, adjoint.voltage(...nodes));
-        return [row, builder.mul(readings.voltage(...nodes), effect)];
+        return [row, builder.mulAdd(adjoint.elsewhere(row, readings), readings.voltage(...nodes), effect)];
       }),
     );
+    return { byRow, slope: adjoint.slope(readings) };
   }
 
   private weigh(transfer: Transfer, readings: DriveReadings, gradient: Gradient): void {
@@ -254,26 +266,30 @@ class SweepWriter {
     }
   }
 
-  private weighPhasor(readings: DriveReadings, phasor: Phasor, weight: Value, { probes, direct }: Gradient): void {
+  private weighPhasor(readings: DriveReadings, phasor: Phasor, weight: Value, { probes, currents, direct }: Gradient): void {
     const { builder, tape } = this;
     if (phasor.kind === 'between') {
       probes.push({ into: phasor.one, outOf: phasor.other, current: weight });
       return;
     }
-    for (const { row, sign } of readings.admittancesOf(phasor.row)) {
+    for (const { row, sign } of readings.partsOfCurrent(phasor.row)) {
       const signed = sign < 0 ? negative(weight) : weight;
+      if (!isAdmittance(this.network.laws[row])) {
+        currents.set(row, builder.add(currents.get(row) ?? ZERO, signed));
+        continue;
+      }
       const [into, outOf] = ends(this.network, row);
-      probes.push({ into, outOf, current: builder.mul(signed, tape.admittanceOf(row)) });
+      probes.push({ into, outOf, current: builder.mul(signed, tape.admittances.of(row)) });
       direct.set(row, builder.add(direct.get(row) ?? ZERO, signed));
     }
   }
 
   /** τ = −Re[(dH/ds)/H] = −Im[(s·dH/ds)/H]/ω, with s·dH/ds = Σ (s·dy/ds)·∂H/∂y. */
-  private groupDelay(transfer: Transfer, byAdmittance: ReadonlyMap<number, Value>): Value {
+  private groupDelay(transfer: Transfer, derivatives: Derivatives | undefined): Value {
     const { builder } = this;
-    let change = ZERO;
-    for (const [row, derivative] of byAdmittance) {
-      change = builder.mulAdd(change, this.tape.logarithmicSlope(row), derivative);
+    let change = derivatives?.slope ?? ZERO;
+    for (const [row, derivative] of derivatives?.byRow ?? []) {
+      change = builder.mulAdd(change, this.tape.admittances.logarithmicSlope(row), derivative);
     }
     const relative = builder.div(change, this.written(transfer).value);
     return { re: -builder.mulParts(relative.im, this.inputs.inverseOmega), im: NOTHING };
@@ -286,17 +302,21 @@ class SweepWriter {
     const law: Law | undefined = network.laws[row];
     switch (law?.law) {
       case 'resistance':
-        return negative(builder.mul(square(builder, tape.admittanceOf(row)), byAdmittance));
+        return negative(builder.mul(square(builder, tape.admittances.of(row)), byAdmittance));
       case 'capacitance':
         return builder.mul(timesJ(real(inputs.omega)), byAdmittance);
       case 'inductance': {
         const inverse = builder.reciprocal(real(inputs.scalar(row, 'L', (of) => (of.law === 'inductance' ? of.inductance : NaN))));
-        return negative(builder.mul(builder.mul(inverse, tape.admittanceOf(row)), byAdmittance));
+        return negative(builder.mul(builder.mul(inverse, tape.admittances.of(row)), byAdmittance));
       }
       default:
         return ZERO;
     }
   }
+}
+
+function hasEquations({ laws }: Network): boolean {
+  return laws.some(({ law }) => law === 'equation');
 }
 
 function dependsOnFrequency({ law }: Law): boolean {
