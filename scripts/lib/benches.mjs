@@ -55,6 +55,7 @@ export async function runBenches({ areas, json }) {
 
   /** @type {Figure[]} */
   const figures = [];
+  /** @type {string[]} */
   const troubles = [];
   /** @param {Figure} figure */
   const note = (figure) => {

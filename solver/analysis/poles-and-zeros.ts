@@ -87,7 +87,7 @@ export interface PolesAndZeros {
  */
 export function polesAndZeros(list: ElementList, transfer: Transfer): PolesAndZeros | Problem {
   const checked = validateElementList(list);
-  if (!checked.ok) return problem('invalid', [], [], checked.message);
+  if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
   const ends = endsOf(toNetwork(checked.list), transfer);
   if (isProblem(ends)) return ends;
   const pencil = pencilOf(checked.list.elements, {

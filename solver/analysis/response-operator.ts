@@ -52,7 +52,7 @@ export class ResponseOperator {
 
   static of(list: ElementList): ResponseOperator | Problem {
     const checked = validateElementList(list);
-    if (!checked.ok) return problem('invalid', [], [], checked.message);
+    if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
     return new ResponseOperator(checked.list);
   }
 

@@ -34,7 +34,7 @@ export interface SolveOptions {
  */
 export function solve(list: ElementList, options: SolveOptions): Solution | Problem {
   const checked = validateElementList(list);
-  if (!checked.ok) return problem('invalid', [], [], checked.message);
+  if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
   const { frequency } = options;
   const fault = faultOfFrequency(frequency);
   if (fault !== undefined) return problem('invalid', [], [], fault);

@@ -78,7 +78,7 @@ export function sourceFrequencies(list: ElementList, operatingFrequency: number)
  */
 export function superpose(list: ElementList, options: SuperpositionOptions): Superposition | Problem {
   const checked = validateElementList(list);
-  if (!checked.ok) return problem('invalid', [], [], checked.message);
+  if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
   const { operatingFrequency, known } = options;
   const fault = faultOfFrequency(operatingFrequency);
   if (fault !== undefined) return problem('invalid', [], [], fault);

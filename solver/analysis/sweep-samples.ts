@@ -50,7 +50,7 @@ export interface SampledSweep {
  */
 export function sweepSamples(list: ElementList, options: SweepSamplesOptions): SampledSweep | Problem {
   const checked = validateElementList(list);
-  if (!checked.ok) return invalid(checked.message);
+  if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
   const frequencies = Float64Array.from(options.frequencies);
   for (const frequency of frequencies) {
     const fault = faultOfFrequency(frequency);

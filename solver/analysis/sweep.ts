@@ -73,7 +73,7 @@ export interface RunOptions {
 /** Analyses a network for outputs; a `Problem` where the request is faulty. */
 export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[]): PreparedSweep | Problem {
   const checked = validateElementList(list);
-  if (!checked.ok) return problem('invalid', [], [], checked.message);
+  if (!checked.ok) return problem('invalid', checked.elements, [], checked.message);
   const network = toNetwork(checked.list);
   const resolved: Output[] = [];
   for (const output of outputs) {
@@ -89,7 +89,7 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
       let { laws } = network;
       if (changed !== undefined) {
         const rechecked = validateElementList(changed);
-        if (!rechecked.ok) return problem('invalid', [], [], rechecked.message);
+        if (!rechecked.ok) return problem('invalid', rechecked.elements, [], rechecked.message);
         current = rechecked.list;
         const other = toNetwork(current);
         if (!isSameGraph(network, other)) {

@@ -4,8 +4,13 @@ import { elementKinds, faultOfFields, isElementKind, nodeCountOf } from './regis
 
 export type ElementListResult =
   | { readonly ok: true; readonly list: ElementList }
-  /** One sentence that names the element at fault (by id, or by place where it has none) and what it lacks. */
-  | { readonly ok: false; readonly message: string };
+  | {
+      readonly ok: false;
+      /** One sentence that names the element at fault (by id, or by place where it has none) and what it lacks. */
+      readonly message: string;
+      /** The element at fault by its id, where it has one that can be told. */
+      readonly elements: readonly string[];
+    };
 
 /** Bounds on what is taken in; a hand-drawn network is far below them. */
 const MOST_ELEMENTS = 20_000;
@@ -13,8 +18,8 @@ const LONGEST_NAME = 200;
 
 /**
  * Checks that a value from outside is an element list, version 1: the shape, the kinds, the named nodes of each, finite
- * numbers, unique ids, sensed elements that are there. Fields that are not known are passed over. Whether the network has a solution is not asked
- * here. Gives the same elements back, typed.
+ * numbers, unique ids, sensed elements that are there. Fields that are not known are passed over. Whether the network has
+ * a solution is not asked here. Gives the same elements back, typed.
  */
 export function validateElementList(value: unknown): ElementListResult {
   if (!isRecord(value)) return refuse('An element list is an object with a version and elements.');
@@ -25,11 +30,11 @@ export function validateElementList(value: unknown): ElementListResult {
   const ids = new Map<string, UnknownFields>();
   for (const [place, element] of (elements as readonly unknown[]).entries()) {
     const fault = faultOf(element, place, ids);
-    if (fault !== undefined) return refuse(fault);
+    if (fault !== undefined) return refuse(fault, idOf(element));
   }
   for (const [id, { sensedElement }] of ids) {
     const fault = typeof sensedElement === 'string' ? faultOfSensing(id, sensedElement, ids) : undefined;
-    if (fault !== undefined) return refuse(fault);
+    if (fault !== undefined) return refuse(fault, id);
   }
   return { ok: true, list: { version: 1, elements: elements as readonly Element[] } };
 }
@@ -75,6 +80,10 @@ function isName(value: unknown): value is string {
   return typeof value === 'string' && value.length > 0 && value.length <= LONGEST_NAME;
 }
 
-function refuse(message: string): ElementListResult {
-  return { ok: false, message };
+function idOf(element: unknown): string | undefined {
+  return isRecord(element) && isName(element['id']) ? element['id'] : undefined;
+}
+
+function refuse(message: string, id?: string): ElementListResult {
+  return { ok: false, message, elements: id === undefined ? [] : [id] };
 }

@@ -14,6 +14,7 @@ function expectProblem(problem: Problem | undefined, expected: NonNullable<Probl
   if (expected.kind === 'invalid') {
     // A list that is refused is refused in words.
     for (const element of expected.elements) expect(message).toContain(element);
+    expect(problem?.elements).toEqual(expected.elements);
   } else {
     expect([...(problem?.elements ?? [])].sort()).toEqual([...expected.elements].sort());
     expect([...(problem?.nodes ?? [])].sort()).toEqual([...expected.nodes].sort());
