@@ -1,6 +1,8 @@
 import type { ElementList } from '../elements/element-list';
 import type { Law } from '../elements/law';
 import { validateElementList } from '../elements/validate-element-list';
+import type { AdaptiveOptions } from './adaptive-frequencies';
+import { adaptiveFrequencies } from './adaptive-frequencies';
 import { faultOfFrequency } from './frequency';
 import type { Network } from './network';
 import { toNetwork } from './network';
@@ -15,6 +17,8 @@ export interface SweepOptions {
   /** The operating frequencies, hertz, in any order. */
   readonly frequencies: ArrayLike<number>;
   readonly outputs: readonly SweepOutput[];
+  /** Adds frequencies where the outputs need them, so that no narrow resonance is missed; the result is rising then. */
+  readonly adaptive?: AdaptiveOptions;
 }
 
 /** One output over the frequencies, rms phasors. Where `determined` is 0 there is no value, and `re` and `im` hold 0. */
@@ -50,7 +54,7 @@ export interface Sweep {
  */
 export function sweep(list: ElementList, options: SweepOptions): Sweep | Problem {
   const prepared = prepareSweep(list, options.outputs);
-  return prepared.ok ? prepared.run(options.frequencies) : prepared;
+  return prepared.ok ? prepared.run(options.frequencies, options) : prepared;
 }
 
 /** A network analysed for outputs, to be run again and again. */
@@ -68,6 +72,8 @@ export interface RunOptions {
   readonly list?: ElementList;
   /** A sweep of this handle over as many frequencies that is no longer wanted: its arrays are written over and given back. */
   readonly reuse?: Sweep;
+  /** As in `SweepOptions`. */
+  readonly adaptive?: AdaptiveOptions;
 }
 
 /** Analyses a network for outputs; a `Problem` where the request is faulty. */
@@ -84,7 +90,7 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
   let program = new SweepProgram(network, resolved);
   return {
     ok: true,
-    run(frequencies, { list: changed, reuse } = {}) {
+    run(given, { list: changed, reuse, adaptive } = {}) {
       let current = checked.list;
       let { laws } = network;
       if (changed !== undefined) {
@@ -98,7 +104,16 @@ export function prepareSweep(list: ElementList, outputs: readonly SweepOutput[])
         ({ laws } = other);
         if (!program.fits(laws)) program = new SweepProgram(other, resolved);
       }
-      return runPrepared(current, laws, program, resolved, outputs, frequencies, reuse);
+      const runOver = (frequencies: ArrayLike<number>, over?: Sweep): Sweep | Problem =>
+        runPrepared(current, laws, program, resolved, outputs, frequencies, over);
+      if (adaptive === undefined) return runOver(given, reuse);
+      const plain = runOver(given);
+      if (!plain.ok) return plain;
+      const evaluate = (frequencies: Float64Array): readonly SweepTrace[] | undefined => {
+        const found = runOver(frequencies);
+        return found.ok ? found.traces : undefined;
+      };
+      return runOver(adaptiveFrequencies(given, evaluate, adaptive), reuse);
     },
   };
 }
