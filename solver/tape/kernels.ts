@@ -59,11 +59,23 @@ export function runKernels(memory: Float64Array, code: Int32Array, lanes: number
       case OP.pairSub:
         pairSub(memory, lanes, p, q, r, s, t, u);
         break;
+      case OP.pairAddSub:
+        pairAddSub(memory, lanes, p, q, r, s, t, u);
+        break;
       case OP.scale:
         scale(memory, lanes, p, q, r, s, t);
         break;
       case OP.scaleAdd:
-        scaleAdd(memory, lanes, p, q, r, s, t, u, v);
+        scaleAdd(memory, lanes, p, q, r, s, t, u, v, 1, 1);
+        break;
+      case OP.scaleAddSub:
+        scaleAdd(memory, lanes, p, q, r, s, t, u, v, 1, -1);
+        break;
+      case OP.scaleSubAdd:
+        scaleAdd(memory, lanes, p, q, r, s, t, u, v, -1, 1);
+        break;
+      case OP.scaleSub:
+        scaleAdd(memory, lanes, p, q, r, s, t, u, v, -1, -1);
         break;
       case OP.complexMul:
         complexMul(memory, lanes, p, q, r, s, t, u);
@@ -72,10 +84,28 @@ export function runKernels(memory: Float64Array, code: Int32Array, lanes: number
         conjugateMul(memory, lanes, p, q, r, s, t, u);
         break;
       case OP.complexMulAdd:
-        complexMulAdd(memory, lanes, p, q, r, s, t, u, v, w);
+        complexMulAdd(memory, lanes, p, q, r, s, t, u, v, w, 1, 1);
+        break;
+      case OP.complexMulAddSub:
+        complexMulAdd(memory, lanes, p, q, r, s, t, u, v, w, 1, -1);
+        break;
+      case OP.complexMulSubAdd:
+        complexMulAdd(memory, lanes, p, q, r, s, t, u, v, w, -1, 1);
+        break;
+      case OP.complexMulSub:
+        complexMulAdd(memory, lanes, p, q, r, s, t, u, v, w, -1, -1);
         break;
       case OP.conjugateMulAdd:
-        conjugateMulAdd(memory, lanes, p, q, r, s, t, u, v, w);
+        conjugateMulAdd(memory, lanes, p, q, r, s, t, u, v, w, 1, 1);
+        break;
+      case OP.conjugateMulAddSub:
+        conjugateMulAdd(memory, lanes, p, q, r, s, t, u, v, w, 1, -1);
+        break;
+      case OP.conjugateMulSubAdd:
+        conjugateMulAdd(memory, lanes, p, q, r, s, t, u, v, w, -1, 1);
+        break;
+      case OP.conjugateMulSub:
+        conjugateMulAdd(memory, lanes, p, q, r, s, t, u, v, w, -1, -1);
         break;
       case OP.complexReciprocal:
         complexReciprocal(memory, lanes, p, q, r, s);
@@ -169,6 +199,15 @@ function pairSub(m: Lanes, n: number, p: number, q: number, a: number, b: number
   }
 }
 
+function pairAddSub(m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number, d: number): void {
+  for (let i = 0; i < n; i++) {
+    const re = (m[a + i] ?? 0) + (m[c + i] ?? 0);
+    const im = (m[b + i] ?? 0) - (m[d + i] ?? 0);
+    m[p + i] = re;
+    m[q + i] = im;
+  }
+}
+
 function scale(m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number): void {
   for (let i = 0; i < n; i++) {
     const factor = m[a + i] ?? 0;
@@ -179,11 +218,16 @@ function scale(m: Lanes, n: number, p: number, q: number, a: number, b: number, 
   }
 }
 
-function scaleAdd(m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number, d: number, e: number): void {
+/** The signs, 1 or −1, are of the products; to multiply by them is exact. */
+// prettier-ignore
+function scaleAdd(
+  m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number, d: number, e: number,
+  signRe: number, signIm: number,
+): void {
   for (let i = 0; i < n; i++) {
     const factor = m[c + i] ?? 0;
-    const re = (m[a + i] ?? 0) + factor * (m[d + i] ?? 0);
-    const im = (m[b + i] ?? 0) + factor * (m[e + i] ?? 0);
+    const re = (m[a + i] ?? 0) + signRe * (factor * (m[d + i] ?? 0));
+    const im = (m[b + i] ?? 0) + signIm * (factor * (m[e + i] ?? 0));
     m[p + i] = re;
     m[q + i] = im;
   }
@@ -214,14 +258,15 @@ function conjugateMul(m: Lanes, n: number, p: number, q: number, a: number, b: n
 // prettier-ignore
 function complexMulAdd(
   m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number, d: number, e: number, f: number,
+  signRe: number, signIm: number,
 ): void {
   for (let i = 0; i < n; i++) {
     const aRe = m[c + i] ?? 0;
     const aIm = m[d + i] ?? 0;
     const bRe = m[e + i] ?? 0;
     const bIm = m[f + i] ?? 0;
-    const re = (m[a + i] ?? 0) + (aRe * bRe - aIm * bIm);
-    const im = (m[b + i] ?? 0) + (aRe * bIm + aIm * bRe);
+    const re = (m[a + i] ?? 0) + signRe * (aRe * bRe - aIm * bIm);
+    const im = (m[b + i] ?? 0) + signIm * (aRe * bIm + aIm * bRe);
     m[p + i] = re;
     m[q + i] = im;
   }
@@ -230,14 +275,15 @@ function complexMulAdd(
 // prettier-ignore
 function conjugateMulAdd(
   m: Lanes, n: number, p: number, q: number, a: number, b: number, c: number, d: number, e: number, f: number,
+  signRe: number, signIm: number,
 ): void {
   for (let i = 0; i < n; i++) {
     const aRe = m[c + i] ?? 0;
     const aIm = m[d + i] ?? 0;
     const bRe = m[e + i] ?? 0;
     const bIm = m[f + i] ?? 0;
-    const re = (m[a + i] ?? 0) + (aRe * bRe + aIm * bIm);
-    const im = (m[b + i] ?? 0) + (aRe * bIm - aIm * bRe);
+    const re = (m[a + i] ?? 0) + signRe * (aRe * bRe + aIm * bIm);
+    const im = (m[b + i] ?? 0) + signIm * (aRe * bIm - aIm * bRe);
     m[p + i] = re;
     m[q + i] = im;
   }

@@ -47,18 +47,44 @@ export const OP = {
   complexReciprocal: 20,
   /** The same, and the watch on the pivot, c being the sum of the squares of its terms: watch += (c/(a² + b²))². */
   watchedComplexReciprocal: 21,
+  /** a + c, b − d */
+  pairAddSub: 22,
+  /** a + c·d, b − c·e */
+  scaleAddSub: 23,
+  /** a − c·d, b + c·e */
+  scaleSubAdd: 24,
+  /** a − c·d, b − c·e */
+  scaleSub: 25,
+  /** a + (c·e − d·f), b − (c·f + d·e) */
+  complexMulAddSub: 26,
+  /** a − (c·e − d·f), b + (c·f + d·e) */
+  complexMulSubAdd: 27,
+  /** a − (c·e − d·f), b − (c·f + d·e) */
+  complexMulSub: 28,
+  /** a + (c·e + d·f), b − (c·f − d·e) */
+  conjugateMulAddSub: 29,
+  /** a − (c·e + d·f), b + (c·f − d·e) */
+  conjugateMulSubAdd: 30,
+  /** a − (c·e + d·f), b − (c·f − d·e) */
+  conjugateMulSub: 31,
 } as const;
 
 export type Opcode = (typeof OP)[keyof typeof OP];
 
 /** How many slots each operation writes, by opcode. */
-export const RESULTS: readonly number[] = [1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2];
+export const RESULTS: readonly number[] = [
+  1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 1, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2,
+];
 
 /** How many slots each operation reads, by opcode. */
-export const OPERANDS: readonly number[] = [2, 2, 2, 3, 3, 4, 4, 5, 5, 5, 1, 2, 4, 4, 3, 5, 4, 4, 6, 6, 2, 3];
+export const OPERANDS: readonly number[] = [
+  2, 2, 2, 3, 3, 4, 4, 5, 5, 5, 1, 2, 4, 4, 3, 5, 4, 4, 6, 6, 2, 3, 4, 5, 5, 5, 6, 6, 6, 6, 6, 6,
+];
 
 /** Floating-point operations of each, by opcode; a division counts as four. For choosing between orders, not for timing. */
-export const COST: readonly number[] = [1, 1, 1, 2, 2, 3, 3, 4, 4, 4, 4, 8, 2, 2, 2, 4, 6, 6, 8, 8, 9, 12];
+export const COST: readonly number[] = [
+  1, 1, 1, 2, 2, 3, 3, 4, 4, 4, 4, 8, 2, 2, 2, 4, 6, 6, 8, 8, 9, 12, 2, 4, 4, 4, 8, 8, 8, 8, 8, 8,
+];
 
 /** The words of an instruction as stored: opcode, two results, six operands. */
 export const INSTRUCTION_WORDS = 9;

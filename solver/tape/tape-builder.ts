@@ -89,10 +89,15 @@ export class TapeBuilder implements Listing {
   }
 
   add(a: Value, b: Value): Value {
-    const sameRe = a.re > 0 === b.re > 0;
-    if (isComplex(a) && isComplex(b) && sameRe === a.im > 0 === b.im > 0) {
-      // Each pair of parts has like signs, or each has unlike ones.
-      const [re, im] = this.emitPair(sameRe ? OP.pairAdd : OP.pairSub, a.re, a.im, b.re, b.im);
+    if (isComplex(a) && isComplex(b)) {
+      const sameRe = sign(a.re) === sign(b.re);
+      const sameIm = sign(a.im) === sign(b.im);
+      if (!sameRe && sameIm) {
+        const [im, re] = this.emitPair(OP.pairAddSub, a.im, a.re, b.im, b.re);
+        return { re: signed(re, a.re), im: signed(im, a.im) };
+      }
+      const code = !sameRe ? OP.pairSub : sameIm ? OP.pairAdd : OP.pairAddSub;
+      const [re, im] = this.emitPair(code, a.re, a.im, b.re, b.im);
       return { re: signed(re, a.re), im: signed(im, a.im) };
     }
     return { re: this.addParts(a.re, b.re), im: this.addParts(a.im, b.im) };
@@ -128,10 +133,11 @@ export class TapeBuilder implements Listing {
       const [re, im] = this.emitPair(conjugate ? OP.conjugateMul : OP.complexMul, a.re, a.im, b.re, b.im);
       return { re: signRe * re, im: signIm * im };
     }
-    if (isComplex(c) && sign(c.re) === signRe && sign(c.im) === signIm) {
-      const code = conjugate ? OP.conjugateMulAdd : OP.complexMulAdd;
+    if (isComplex(c)) {
+      const codes = conjugate ? CONJUGATE_MUL_ADD : COMPLEX_MUL_ADD;
+      const code = codes[signPlace(c, signRe, signIm)] ?? OP.complexMulAdd;
       const [re, im] = this.emitPair(code, c.re, c.im, a.re, a.im, b.re, b.im);
-      return { re: signRe * re, im: signIm * im };
+      return { re: signed(re, c.re), im: signed(im, c.im) };
     }
     return {
       re: this.addDot(c.re, a.re, b.re, -a.im, b.im),
@@ -233,9 +239,10 @@ export class TapeBuilder implements Listing {
       const [re, im] = this.emitPair(OP.scale, factor, turned.re, turned.im);
       return { re: signRe * re, im: signIm * im };
     }
-    if (isComplex(c) && sign(c.re) === signRe && sign(c.im) === signIm) {
-      const [re, im] = this.emitPair(OP.scaleAdd, c.re, c.im, factor, turned.re, turned.im);
-      return { re: signRe * re, im: signIm * im };
+    if (isComplex(c)) {
+      const code = SCALE_ADD[signPlace(c, signRe, signIm)] ?? OP.scaleAdd;
+      const [re, im] = this.emitPair(code, c.re, c.im, factor, turned.re, turned.im);
+      return { re: signed(re, c.re), im: signed(im, c.im) };
     }
     return this.scaleParts(c, factor, turned);
   }
@@ -342,6 +349,21 @@ export function conjugate({ re, im }: Value): Value {
 /** j·a, for nothing. */
 export function timesJ({ re, im }: Value): Value {
   return { re: -im, im: re };
+}
+
+/** Operations that add a product to a pair: by whether its parts are taken from the pair's first, and second. */
+const SCALE_ADD: readonly Opcode[] = [OP.scaleAdd, OP.scaleAddSub, OP.scaleSubAdd, OP.scaleSub];
+const COMPLEX_MUL_ADD: readonly Opcode[] = [OP.complexMulAdd, OP.complexMulAddSub, OP.complexMulSubAdd, OP.complexMulSub];
+const CONJUGATE_MUL_ADD: readonly Opcode[] = [
+  OP.conjugateMulAdd,
+  OP.conjugateMulAddSub,
+  OP.conjugateMulSubAdd,
+  OP.conjugateMulSub,
+];
+
+/** The place in these, for a product whose parts have the signs. */
+function signPlace(c: Value, signRe: number, signIm: number): number {
+  return (sign(c.re) === signRe ? 0 : 2) + (sign(c.im) === signIm ? 0 : 1);
 }
 
 function sign(part: Part): 1 | -1 {

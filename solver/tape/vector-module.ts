@@ -39,6 +39,16 @@ const FORMULAS: readonly (readonly [code: number, formulas: readonly string[]])[
   [OP.conjugateMulAdd, ['a c e * d f * + +', 'b c f * d e * - +']],
   [OP.complexReciprocal, ['u = 1 a a * b b * + /', 'a u *', 'b u *']],
   [OP.watchedComplexReciprocal, ['u = 1 a a * b b * + /', 'v = c u *', 'watch = watch v v * +', 'a u *', 'b u *']],
+  [OP.pairAddSub, ['a c +', 'b d -']],
+  [OP.scaleAddSub, ['a c d * +', 'b c e * -']],
+  [OP.scaleSubAdd, ['a c d * -', 'b c e * +']],
+  [OP.scaleSub, ['a c d * -', 'b c e * -']],
+  [OP.complexMulAddSub, ['a c e * d f * - +', 'b c f * d e * + -']],
+  [OP.complexMulSubAdd, ['a c e * d f * - -', 'b c f * d e * + +']],
+  [OP.complexMulSub, ['a c e * d f * - -', 'b c f * d e * + -']],
+  [OP.conjugateMulAddSub, ['a c e * d f * + +', 'b c f * d e * - -']],
+  [OP.conjugateMulSubAdd, ['a c e * d f * + -', 'b c f * d e * - +']],
+  [OP.conjugateMulSub, ['a c e * d f * + -', 'b c f * d e * - -']],
 ];
 
 /** Bytes of a row of lanes that one turn of a kernel's loop works off: four times two lanes. */
