@@ -20,6 +20,7 @@ const SAMPLES = 3;
 export class SweepProgram {
   private readonly shape: string;
   private usual: SweepTape | 'none' | undefined;
+  private doubts = new Uint8Array(0);
   private readonly alternatives: (SweepTape | 'none')[] = [];
 
   /** @param levelOf the level of a row's numbers */
@@ -36,15 +37,23 @@ export class SweepProgram {
     return shapeOf(laws) === this.shape;
   }
 
-  /** Runs over frequencies; marks in `doubtful` the places that are left to the exact engine. */
-  run(laws: readonly Law[], frequencies: Float64Array, arrays: readonly OutputArrays[], doubtful: Uint8Array): void {
+  /** Marks for so many places, none of them set; the same array again and again. */
+  doubtsFor(count: number): Uint8Array {
+    if (this.doubts.length !== count) this.doubts = new Uint8Array(count);
+    else this.doubts.fill(0);
+    return this.doubts;
+  }
+
+  /** Runs over frequencies; marks in `doubtful` the places that are left to the exact engine, and says whether there are any. */
+  run(laws: readonly Law[], frequencies: Float64Array, arrays: readonly OutputArrays[], doubtful: Uint8Array): boolean {
     const usual = this.usualFor(laws, frequencies);
     if (usual === 'none') {
       doubtful.fill(OUTSIDE);
-      return;
+      return frequencies.length > 0;
     }
     runOverPoints(usual, laws, { frequencies }, arrays, doubtful);
     if (doubtful.includes(WEAK)) this.runAgain(laws, (place) => frequencies[place] ?? 0, arrays, doubtful);
+    return doubtful.includes(WEAK) || doubtful.includes(OUTSIDE);
   }
 
   /** Runs over frequencies and samples; values and marks stand at frequency·samples + sample. */

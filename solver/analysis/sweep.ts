@@ -143,11 +143,10 @@ function runPrepared(
     if (fault !== undefined) return problem('invalid', [], [], fault);
   }
   const count = frequencies.length;
-  const doubtful = new Uint8Array(count);
-  program.run(laws, frequencies, traces, doubtful);
+  const doubtful = program.doubtsFor(count);
 
   const problems = new Map<string, { problem: Problem; at: number[] }>();
-  if (doubtful.some((doubt) => doubt !== 0)) {
+  if (program.run(laws, frequencies, traces, doubtful)) {
     const exact = new ExactSweep(list);
     for (const output of outputs) exact.prepare(output);
     for (const [place, frequency] of frequencies.entries()) {
