@@ -44,7 +44,8 @@ function contentSecurityPolicy(nonce: string): string {
   const development = process.env.NODE_ENV === 'development';
   return [
     `default-src 'self'`,
-    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic'${development ? " 'unsafe-eval'" : ''}`,
+    // The solver's kernels are a WebAssembly module, made in the page; that lets no text be run as script.
+    `script-src 'self' 'nonce-${nonce}' 'strict-dynamic' 'wasm-unsafe-eval'${development ? " 'unsafe-eval'" : ''}`,
     development ? `style-src 'self' 'unsafe-inline'` : `style-src 'self' 'nonce-${nonce}'`,
     `style-src-attr 'unsafe-inline'`,
     `img-src 'self' blob: data:`,

@@ -1,6 +1,8 @@
-/** Where a response changes over a width, hertz, that a grid may step over: a pole or a zero tells. */
+/** Where a response may change over a width that a grid would step over: a pole or a zero tells, see `hintsOf`. */
 export interface ResonanceHint {
+  /** Hertz. */
   readonly frequency: number;
+  /** The width over which it changes, hertz: that of a resonance between its half-power points. */
   readonly width: number;
 }
 

@@ -288,12 +288,12 @@ function linkComponents(
     const equation = branches.equations[row];
     if (equation === undefined) continue;
     const homes = new Set(
-      [row, ...equation.row]
-        .flatMap((of) => [first[of] ?? 0, second[of] ?? 0])
-        .filter((node) => node !== REFERENCE)
-        .map((node) => componentOf[node] ?? 0),
+      [row, ...equation.row].flatMap((of) => {
+        const apart = [first[of] ?? 0, second[of] ?? 0].filter((node) => node !== REFERENCE);
+        // A port with both ends on the reference node has its current all the same.
+        return (apart.length === 0 ? [REFERENCE] : apart).map((node) => componentOf[node] ?? 0);
+      }),
     );
-    if (homes.size === 0) homes.add(componentOf[REFERENCE] ?? 0);
     const [one] = homes;
     for (const home of homes) {
       touched.add(home);

@@ -6,7 +6,7 @@ import type { Problem } from '../analysis/problem';
 import type { Sweep } from '../analysis/sweep';
 import { prepareSweep } from '../analysis/sweep';
 import type { SweepTransfer } from '../analysis/sweep-output';
-import type { Hint } from './hints';
+import type { ResonanceHint } from '../analysis/adaptive-frequencies';
 import { hintsOf } from './hints';
 import type { ResponseFunction } from './response';
 
@@ -25,7 +25,7 @@ export function networkResponse(list: ElementList, output: SweepTransfer): Netwo
   if (!prepared.ok) return prepared;
   const one = new Float64Array(1);
   let last: Sweep | undefined;
-  let known: readonly Hint[] | undefined;
+  let known: readonly ResonanceHint[] | undefined;
   return {
     ok: true,
     evaluate(frequency) {
@@ -49,7 +49,7 @@ export function networkResponse(list: ElementList, output: SweepTransfer): Netwo
 }
 
 /** Several sources have their poles in common, but the zeros of their sum are not those of each. */
-function hintsFor(list: ElementList, output: SweepTransfer): readonly Hint[] {
+function hintsFor(list: ElementList, output: SweepTransfer): readonly ResonanceHint[] {
   const transfers = transfersOf(list, output);
   return transfers.flatMap(({ transfer, isWhole }) => {
     const found = polesAndZeros(list, transfer);

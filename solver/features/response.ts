@@ -1,4 +1,4 @@
-import type { Hint } from './hints';
+import type { ResonanceHint } from '../analysis/adaptive-frequencies';
 
 /**
  * A response as the features see it: a complex number as a function of the frequency. Where it comes from (a sweep, a
@@ -15,7 +15,7 @@ export interface ResponseFunction {
     readonly determined: Uint8Array;
   };
   /** Where it may change over less than a grid steps over, where that is known. */
-  readonly hints?: readonly Hint[];
+  readonly hints?: readonly ResonanceHint[];
 }
 
 /** From where to where, hertz, 0 < low < high. */

@@ -1,13 +1,13 @@
 import type { Problem } from '../analysis/problem';
 import { problem } from '../analysis/problem';
-import type { Hint } from './hints';
+import type { ResonanceHint } from '../analysis/adaptive-frequencies';
 import type { Band, ResponseFunction } from './response';
 
 export interface ScanOptions extends Band {
   /** Points of the grid in a decade, before it is made finer where the response asks for it; 60 if not given. */
   readonly perDecade?: number;
   /** What the grid must not step over, see `hintsOf`; those of the response itself if not given. */
-  readonly hints?: readonly Hint[];
+  readonly hints?: readonly ResonanceHint[];
 }
 
 /**
@@ -80,7 +80,7 @@ function isPlain(one: Point, other: Point): boolean {
   return (one.re / a) * (other.re / b) + (one.im / a) * (other.im / b) >= COS_TURN || a === 0 || b === 0;
 }
 
-function startingGrid(low: number, high: number, perDecade: number, hints: readonly Hint[]): Float64Array {
+function startingGrid(low: number, high: number, perDecade: number, hints: readonly ResonanceHint[]): Float64Array {
   const steps = Math.max(1, Math.ceil(Math.log10(high / low) * perDecade));
   const ratio = (high / low) ** (1 / steps);
   const grid = Array.from({ length: steps + 1 }, (_, k) => (k === steps ? high : low * (high / low) ** (k / steps)));

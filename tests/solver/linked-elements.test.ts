@@ -261,6 +261,29 @@ describe('lines and blocks', () => {
     expectPhasor(answer.voltage('a'), 0.5, 0, 64);
   });
 
+  // θ = π/10 of a turn: the input impedance of a shorted line is jZ₀·tan θ.
+  it.each([
+    ['on the reference node', '0'],
+    ['on a node of its own', 'b'],
+  ])('a line shorted at its far end, %s, is reactive there and carries current', (_where, far) => {
+    const theta = 2 * Math.PI * 0.1;
+    const answer = solved(
+      [
+        drive(),
+        r('R1', 'in', 'a', 50),
+        { id: 'W1', kind: 'line', nodes: ['a', '0', far, far], impedance: 50, delay: 1e-6 },
+        ...(far === '0' ? [] : [r('R2', far, '0', 7)]),
+      ],
+      1e5,
+    );
+    const size = 1 + Math.tan(theta) ** 2;
+    expectPhasor(answer.voltage('a'), Math.tan(theta) ** 2 / size, Math.tan(theta) / size, 64);
+    // |i₂| = |i₁|·1/cos θ: a standing wave, largest at the short.
+    const [here, there] = [answer.current('W1')?.abs() ?? NaN, answer.current('W1', 1)?.abs() ?? NaN];
+    expect(Math.abs(there - here / Math.cos(theta))).toBeLessThanOrEqual(64 * Number.EPSILON * there);
+    expect(answer.elementVoltage('W1', 1)).toMatchObject({ re: 0, im: 0 });
+  });
+
   it('a block of scattering parameters between its reference resistances gives its s21', () => {
     const points = [1, 100].map((frequency) => ({
       frequency,
