@@ -133,6 +133,7 @@ export class Engine {
   private setGivenCurrents({ components, componentOf }: Structure, hasNoWayOn: readonly boolean[]): void {
     const { network, branches, readings } = this;
     const { first, second } = network;
+    const isKnown = (node: number): boolean => node === REFERENCE || readings.vKnown[node] === 1;
     for (const component of components) {
       for (const row of [...component.innerCurrents, ...component.outerCurrents]) {
         const ends = [first[row] ?? 0, second[row] ?? 0];
@@ -146,6 +147,7 @@ export class Engine {
         const b = second[row] ?? 0;
         readings.dRe[row] = (readings.vRe[a] ?? 0) - (readings.vRe[b] ?? 0);
         readings.dIm[row] = (readings.vIm[a] ?? 0) - (readings.vIm[b] ?? 0);
+        if (isKnown(a) && isKnown(b)) readings.dKnown[row] = 1;
       }
     }
   }

@@ -25,6 +25,20 @@ describe('conventions', () => {
     expectClose(solution.power('I1'), { re: -20, im: 0 }, 2);
   });
 
+  it('has the voltage and the power of a current source and an open circuit between parts that only the reference node joins', () => {
+    const list = network(
+      voltageSource('V1', '1', '0', 10),
+      currentSource('I1', '1', '2', 2),
+      currentSource('I2', '1', '2', 3, 0, 400),
+      capacitor('C1', '1', '2', 0),
+      resistor('R1', '2', '0', 3),
+    );
+    const solution = solved(solve(list, { frequency: 50 }));
+    for (const id of ['I1', 'I2', 'C1']) expectClose(solution.elementVoltage(id), { re: 4, im: 0 }, 1);
+    expectClose(solution.power('I1'), { re: 8, im: 0 }, 2);
+    expect(solution.power('I2')).toMatchObject({ re: 0, im: 0 });
+  });
+
   it('has a positive reactive power in an inductor and a negative one in a capacitor', () => {
     const list = network(
       voltageSource('V1', '1', '0', 10),
