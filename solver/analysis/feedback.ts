@@ -6,8 +6,10 @@ import { elementAt, REFERENCE } from './network';
 import type { Problem } from './problem';
 
 /**
- * Of the rows with an equation, a problem for each ideal amplifier whose output reaches neither of its inputs. What a node's voltage reaches: the other nodes of rows
- * that conduct, and the nodes of rows in whose equation it stands; not through nodes that given voltages hold.
+ * Of the rows with an equation, a problem for each ideal amplifier whose output reaches neither of its inputs. What a node's
+ * voltage reaches: the other nodes of rows that conduct, and the nodes of rows in whose equation it stands. Nodes that given
+ * voltages hold it does not move, but the current that enters there it does, and so the nodes of rows that sense the current
+ * of a given voltage, as of one of 0 V that stands for an ammeter.
  */
 export function amplifiersWithoutFeedback(
   network: Network,
@@ -18,10 +20,11 @@ export function amplifiersWithoutFeedback(
   if (outputs.length === 0) return [];
   const isHeld = heldNodes(network, branches);
   const around = rowsAround(network, branches);
+  const byHeldCurrents = rowsSensingGivenVoltages(branches);
   return outputs.flatMap((row) => {
     const inputs = branches.equations[row]?.row[0] ?? row;
     const from = network.first[row] ?? REFERENCE;
-    const reached = isHeld.has(from) ? new Set<number>() : reach(network, around, isHeld, from);
+    const reached = reach(network, around, isHeld, byHeldCurrents, from);
     const [plus, minus] = [network.first[inputs] ?? 0, network.second[inputs] ?? 0];
     return reached.has(plus) || reached.has(minus) ? [] : [noFeedbackProblem(network, row, inputs)];
   });
@@ -60,22 +63,40 @@ function rowsAround({ first, second, nodeNames }: Network, branches: BranchTable
   return around;
 }
 
+/** The rows in whose equation the current of a given voltage stands. */
+function rowsSensingGivenVoltages({ equations, form }: BranchTable): readonly number[] {
+  return equations.flatMap((equation, row) =>
+    equation?.row.some((of, term) => equation.ofVoltage[term] !== 1 && form[of] === GIVEN_VOLTAGE) === true ? [row] : [],
+  );
+}
+
 function reach(
   { first, second }: Network,
   around: readonly (readonly number[])[],
   isHeld: ReadonlySet<number>,
+  byHeldCurrents: readonly number[],
   from: number,
 ): ReadonlySet<number> {
-  const reached = new Set([from]);
-  const waiting = [from];
-  for (let node = waiting.pop(); node !== undefined; node = waiting.pop()) {
-    for (const row of around[node] ?? []) {
-      for (const other of [first[row] ?? 0, second[row] ?? 0]) {
-        if (reached.has(other) || isHeld.has(other)) continue;
-        reached.add(other);
-        waiting.push(other);
-      }
+  const reached = new Set<number>();
+  const waiting: number[] = [];
+  let isHeldReached = false;
+  const visit = (node: number): void => {
+    if (isHeld.has(node)) {
+      if (node === REFERENCE || isHeldReached) return;
+      isHeldReached = true;
+      for (const row of byHeldCurrents) visitRow(row);
+    } else if (!reached.has(node)) {
+      reached.add(node);
+      waiting.push(node);
     }
+  };
+  const visitRow = (row: number): void => {
+    visit(first[row] ?? REFERENCE);
+    visit(second[row] ?? REFERENCE);
+  };
+  visit(from);
+  for (let node = waiting.pop(); node !== undefined; node = waiting.pop()) {
+    for (const row of around[node] ?? []) visitRow(row);
   }
   return reached;
 }

@@ -207,6 +207,21 @@ describe('operational amplifiers', () => {
     expect(answer).toMatchObject({ ok: false, kind: 'noFeedback', elements: ['U1'] });
   });
 
+  it('has a way back by a sensed current that enters what given voltages hold', () => {
+    // An ammeter of 0 V in the load's way to the reference, or the source that the output drives, tells the input.
+    const back: Element = { id: 'H1', kind: 'currentControlledVoltageSource', nodes: ['m', '0'], sensedElement: 'A1', transresistance: 500 };
+    const amplifier: Element = { id: 'U1', kind: 'operationalAmplifier', nodes: ['in', 'm', 'out'] };
+    const meter = (plus: string, rms: number): Element => ({ id: 'A1', kind: 'voltageSource', nodes: [plus, '0'], value: { rms, phase: 0, frequency: null } });
+    const loaded = solved([drive(), amplifier, r('R1', 'out', 's', 1000), meter('s', 0), back]);
+    expectPhasor(loaded.current('A1'), 1 / 500, 0);
+    expectPhasor(loaded.voltage('out'), 2, 0);
+    const held = solved([drive(), amplifier, meter('out', 5), back]);
+    expectPhasor(held.current('U1', 1), -1 / 500, 0);
+    // Without the sensing there is none.
+    const open = solve({ version: 1, elements: [drive(), amplifier, r('R1', 'out', 's', 1000), meter('s', 0), r('R2', 'm', '0', 1)] }, { frequency: HZ });
+    expect(open).toMatchObject({ ok: false, kind: 'noFeedback', elements: ['U1'] });
+  });
+
   it('a follower of a node that nothing ties down is as little determined as the node, and that is said once', () => {
     const answer = solve(
       {
