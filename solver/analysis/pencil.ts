@@ -122,25 +122,23 @@ function missingSensedElement(elements: readonly Element[], ports: readonly Port
   return undefined;
 }
 
-/** The ports that hang together with the given nodes other than through the reference node alone. */
+/**
+ * The ports that hang together with the given nodes other than through the reference node alone. An element is a member
+ * of its own beside its nodes: one with all its ends on the reference node hangs by what it senses and by what senses it.
+ */
 function portsAround(ports: readonly Port[], around: readonly string[]): readonly Port[] {
   const nodes = numbered([...ports.flatMap(({ nodes: pair }) => pair), ...around]);
-  const sets = new DisjointSets(nodes.size);
+  const members = new Map<string, number>();
+  for (const { element } of ports) if (!members.has(element)) members.set(element, nodes.size + members.size);
+  const sets = new DisjointSets(nodes.size + members.size);
   const indexOf = (node: string): number => nodes.get(node) ?? 0;
-  const join = (...some: readonly string[]): void => {
-    const ends = some.filter((node) => node !== REFERENCE_NODE);
-    for (const end of ends) sets.union(indexOf(ends[0] ?? end), indexOf(end));
-  };
-  const nodesOf = new Map<string, string[]>();
-  for (const { element, nodes: pair } of ports) nodesOf.set(element, [...(nodesOf.get(element) ?? []), ...pair]);
-  for (const { element, law } of ports) {
-    const sensed = termsOf(law).flatMap(({ port }) => (typeof port === 'number' ? [] : (nodesOf.get(port.element) ?? [])));
-    join(...(nodesOf.get(element) ?? []), ...sensed);
+  const memberOf = (element: string): number => members.get(element) ?? 0;
+  for (const { element, nodes: pair, law } of ports) {
+    for (const node of pair) if (node !== REFERENCE_NODE) sets.union(memberOf(element), indexOf(node));
+    for (const { port } of termsOf(law)) if (typeof port !== 'number') sets.union(memberOf(element), memberOf(port.element));
   }
   const wanted = new Set(around.filter((node) => node !== REFERENCE_NODE).map((node) => sets.find(indexOf(node))));
-  return ports.filter(({ element }) =>
-    (nodesOf.get(element) ?? []).some((node) => node !== REFERENCE_NODE && wanted.has(sets.find(indexOf(node)))),
-  );
+  return ports.filter(({ element }) => wanted.has(sets.find(memberOf(element))));
 }
 
 function numbered(names: Iterable<string>): Map<string, number> {

@@ -252,6 +252,21 @@ describe('what a transfer function may give', () => {
   });
 });
 
+describe('what hangs together with a transfer function', () => {
+  it('is also a source with both ends on the reference node, where it senses and is sensed', () => {
+    // N takes half of the current of R1 out of the node that R1 leads to, by way of M.
+    const list = network(
+      voltageSource('V1', 'a', '0', 1),
+      resistor('R1', 'a', 'b', 1),
+      resistor('R2', 'b', '0', 1),
+      { id: 'M', kind: 'currentControlledCurrentSource', nodes: ['0', '0'], sensedElement: 'R1', gain: 1 },
+      { id: 'N', kind: 'currentControlledCurrentSource', nodes: ['b', '0'], sensedElement: 'M', gain: 0.5 },
+    );
+    // v_b = (1 − 0.5)·(1 − v_b)
+    expect(found(polesAndZeros(list, toNode('b'))).gain).toBeCloseTo(1 / 3, 14);
+  });
+});
+
 describe('stability', () => {
   it('is marginal with single poles on the axis, and unstable with a double one', () => {
     const tank = network(voltageSource('V1', '1', '0', 1), inductor('L1', '1', '2', 1e-3), capacitor('C1', '2', '0', 1e-7));
