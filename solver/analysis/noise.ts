@@ -127,10 +127,11 @@ export function noiseTotal(list: ElementList, pair: PortNodes, band: NoiseBand):
   const scale = from > 0 ? from : LINEAR_PART * to;
   let met: Problem | undefined;
   const at = (u: number, out: Float64Array): boolean => {
-    met = meter.measure(Math.min(to, Math.max(from, scale * Math.sinh(u))), out);
+    const stuck = meter.measure(Math.min(to, Math.max(from, scale * Math.sinh(u))), out);
+    met ??= stuck;
     const step = scale * Math.cosh(u);
     for (let k = 0; k < out.length; k++) out[k] = (out[k] ?? 0) * step;
-    return met === undefined;
+    return stuck === undefined;
   };
   const [low, high] = [Math.asinh(from / scale), Math.asinh(to / scale)];
   const pieces = Math.max(1, Math.ceil(PIECES * (high - low)));
@@ -204,8 +205,17 @@ class NoiseMeter {
       sum += value;
     }
     out[0] = sum;
-    return undefined;
+    return Number.isFinite(sum) ? undefined : beyondRange(frequency);
   }
+}
+
+function beyondRange(frequency: number): Problem {
+  return problem(
+    'notFinite',
+    [],
+    [],
+    `At ${Number(frequency.toPrecision(12))} Hz the noise is too large to be computed with, as that of an integrator is towards 0 Hz. Take higher frequencies, or give what integrates a path at 0 Hz.`,
+  );
 }
 
 function sourcesOf(operator: ResponseOperator): { sources: readonly NoiseSource[]; notCounted: readonly string[] } {

@@ -101,6 +101,20 @@ describe('noise', () => {
     expect(total.contributions).toEqual([{ element: 'R', total: total.total }]);
   });
 
+  it('of an integrator grows without bound towards 0 Hz, and no number is infinite', () => {
+    const list = network(
+      voltageSource('VS1', 'in', '0', 1),
+      resistor('R1', 'in', 'm', 1000),
+      capacitor('C1', 'm', 'out', 1e-9),
+      { id: 'U1', kind: 'operationalAmplifier', nodes: ['0', 'm', 'out'] },
+    );
+    const result = noise(list, ['out', '0'], { frequencies: [1e-200, 1] });
+    expect(result.ok && [...result.determined]).toEqual([0, 1]);
+    expect(result.ok && result.problems.map(({ problem: { kind }, at }) => [kind, at])).toEqual([['notFinite', [0]]]);
+    expect(noiseTotal(list, ['out', '0'], { from: 0, to: 1e6 })).toMatchObject({ ok: false, kind: 'notFinite' });
+    expect(noiseTotal(list, ['out', '0'], { from: 1e-3, to: 1e6 })).toMatchObject({ ok: true });
+  });
+
   it('says what is wrong', () => {
     const list = network(resistor('R', 'a', '0', 1), capacitor('C', 'a', 'b', 1));
     const message = (result: { readonly ok: boolean; readonly message?: string }) => (result.ok ? undefined : result.message);
