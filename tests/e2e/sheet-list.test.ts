@@ -21,6 +21,8 @@ test('sheets are found, ordered, renamed, cloned, put away and taken out again',
   await expect(list.sheets).toHaveCount(3);
 
   await list.act('Crossover', 'Rename');
+  // A hand types when it sees the field.
+  await expect(page.getByRole('textbox', { name: 'New name of Crossover' })).toBeFocused();
   await page.keyboard.press('Control+a');
   await page.keyboard.type('Two-way crossover');
   await page.keyboard.press('Enter');
