@@ -41,7 +41,10 @@ export function levelCrossings(scan: Scan, level: number, reference: Reference =
   return base === undefined || base === 0 ? [] : magnitudeCrossings(scan, base * magnitudeOf(level));
 }
 
-/** Where the magnitude passes a magnitude above 0. */
+/** As a part of the level, what rounding alone may take a magnitude off it: an all-pass does not pass its own. */
+const ON_LEVEL = 1e-12;
+
+/** Where the magnitude passes a magnitude above 0, from one side of it to the other by more than rounding. */
 export function magnitudeCrossings(scan: Scan, magnitude: number): readonly Crossing[] {
   const { frequencies, re, im } = scan;
   const points = Array.from(frequencies, (frequency, k) => ({ frequency, magnitude: Math.hypot(re[k] ?? 0, im[k] ?? 0) }));
@@ -49,14 +52,18 @@ export function magnitudeCrossings(scan: Scan, magnitude: number): readonly Cros
   points.sort((a, b) => a.frequency - b.frequency);
   // Bounded, and straight about the level, also where the magnitude is 0 or has no value.
   const off = (size: number): number => (size === Infinity ? 1 : (size - magnitude) / (size + magnitude));
-  return points.flatMap((point, k) => {
-    const next = points[k + 1];
-    if (next === undefined) return [];
-    const [here, there] = [off(point.magnitude), off(next.magnitude)];
-    if (here >= 0 === there >= 0) return [];
-    const frequency = findRoot((f) => off(magnitudeAt(scan, f)), point.frequency, next.frequency, here, there);
-    return [{ frequency, direction: there >= 0 ? ('rising' as const) : ('falling' as const) }];
-  });
+  const found: Crossing[] = [];
+  let before: { readonly frequency: number; readonly off: number } | undefined;
+  for (const { frequency, magnitude: size } of points) {
+    const there = { frequency, off: off(size) };
+    if (Math.abs(there.off) <= ON_LEVEL) continue;
+    if (before !== undefined && before.off > 0 !== there.off > 0) {
+      const at = findRoot((f) => off(magnitudeAt(scan, f)), before.frequency, frequency, before.off, there.off);
+      found.push({ frequency: at, direction: there.off > 0 ? 'rising' : 'falling' });
+    }
+    before = there;
+  }
+  return found;
 }
 
 /** Sines below this are a crossing; a jump by half a turn, at a zero on the axis, has none so small. */

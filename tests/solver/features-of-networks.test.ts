@@ -2,8 +2,11 @@ import { describe, expect, it } from 'vitest';
 import type { Element } from '@/solver';
 import { solve } from '@/solver';
 import { polesAndZeros } from '@/solver/analysis/poles-and-zeros';
+import { levelCrossings } from '@/solver/features/crossings';
 import { extremesOf } from '@/solver/features/extremes';
 import { hintsOf } from '@/solver/features/hints';
+import { loopMargins } from '@/solver/features/loop-margins';
+import { networkResponse } from '@/solver/features/network-response';
 import { notchesOf, passBand } from '@/solver/features/pass-band';
 import type { Scan } from '@/solver/features/scan';
 import { scanResponse } from '@/solver/features/scan';
@@ -68,5 +71,27 @@ describe('random resonances behind a divider', () => {
       expect(Math.abs((peak?.frequency ?? 0) / f0 - 1)).toBeLessThanOrEqual(1e-11);
       expect(Math.abs((passBand(scan)?.q ?? 0) / q - 1)).toBeLessThanOrEqual(1e-15 * q * q + 1e-11);
     }
+  });
+});
+
+describe('an all-pass', () => {
+  it('passes no level where its magnitude is off it by rounding alone', () => {
+    const list = network(
+      voltageSource('V1', 'in', '0', 1),
+      resistor('R1', 'in', 'm', 1e4),
+      resistor('R2', 'm', 'out', 1e4),
+      resistor('R3', 'in', 'p', 1e4),
+      capacitor('C1', 'p', '0', 1e-9),
+      { id: 'U1', kind: 'operationalAmplifier', nodes: ['p', 'm', 'out'] },
+    );
+    const response = networkResponse(list, { quantity: 'voltage', node: 'out' });
+    if (!response.ok) throw new Error(response.message);
+    const scan = scanResponse(response, { low: 1, high: 1e6 });
+    if (!scan.ok) throw new Error(scan.message);
+    // Some of the points are a last bit above 1, and some below.
+    const sizes = Array.from(scan.re, (re, k) => Math.hypot(re, scan.im[k] ?? 0));
+    expect([sizes.some((size) => size > 1), sizes.some((size) => size < 1)]).toEqual([true, true]);
+    expect(levelCrossings(scan, 0)).toEqual([]);
+    expect(loopMargins(scan)).toMatchObject({ phase: [] });
   });
 });
