@@ -9,8 +9,9 @@ export function linearFrequencies(firstHz: number, lastHz: number, count: number
 
 /** Frequencies above zero from the first to the last, both included exactly, evenly spaced on a logarithmic scale. */
 export function logarithmicFrequencies(firstHz: number, lastHz: number, count: number): Float64Array {
-  const span = Math.log(lastHz / firstHz);
-  return grid(firstHz, lastHz, count, (part) => firstHz * Math.exp(part * span));
+  // Not by the ratio of the two, which may be beyond the range of numbers.
+  const span = Math.log(lastHz) - Math.log(firstHz);
+  return grid(firstHz, lastHz, count, (part) => firstHz * Math.exp(0.5 * part * span) * Math.exp(0.5 * part * span));
 }
 
 /** The frequencies of several lists, rising, each once. */

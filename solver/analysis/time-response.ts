@@ -92,7 +92,9 @@ function evaluate(
   const upper = terms.filter(({ pole }) => pole.im >= 0);
   for (let k = 0; k < times.length; k++) {
     const t = times[k] ?? 0;
-    if (Number.isNaN(t)) return problem('invalid', [], [], 'A response is asked for at times in seconds, and one of them is not a number.');
+    if (Number.isNaN(t) || t === Infinity) {
+      return problem('invalid', [], [], 'A response is asked for at times in seconds, and one of them is not a finite number.');
+    }
     if (t < 0) continue;
     values[k] = constant;
     bounds[k] = ROUNDING * Math.abs(constant);

@@ -15,6 +15,12 @@ const WATCH_LIMIT = 1.6e5;
 const SMALLEST = 1e-75;
 const LARGEST = 1e75;
 
+/**
+ * An output of this size, whatever its unit, is more often what a pivot that cancelled exactly has left than what a network
+ * does: the next order, or the exact engine, looks at it again.
+ */
+const IMPLAUSIBLE = 1e12;
+
 /** A block's lanes: fewer where rows of so many would take more than some megabytes. */
 const MOST_LANES = 72;
 const MOST_NUMBERS = 1_500_000;
@@ -270,7 +276,8 @@ function copyLanes(
   doubtful: Uint8Array,
 ): void {
   if (sign === 0) return;
-  // Nothing times what is not finite is not a number, and neither is a sum with it; two sums need not wait for each other.
+  // A sum of squares is beyond the limit as soon as one of them is, and no number where one is none; two sums need not
+  // wait for each other.
   let [even, odd] = [0, 0];
   const pairs = used & ~1;
   for (let lane = 0; lane < pairs; lane += 2) {
@@ -278,17 +285,17 @@ function copyLanes(
     const other = sign * (memory[from + lane + 1] ?? 0);
     into[start + lane] = one;
     into[start + lane + 1] = other;
-    even += 0 * one;
-    odd += 0 * other;
+    even += one * one;
+    odd += other * other;
   }
   if (pairs < used) {
     const last = sign * (memory[from + pairs] ?? 0);
     into[start + pairs] = last;
-    even += 0 * last;
+    even += last * last;
   }
-  if (even + odd === 0) return;
+  if (even + odd < IMPLAUSIBLE * IMPLAUSIBLE) return;
   for (let lane = 0; lane < used; lane++) {
-    if (!Number.isFinite(memory[from + lane])) doubtful[start + lane] = WEAK;
+    if (!(Math.abs(memory[from + lane] ?? 0) < IMPLAUSIBLE)) doubtful[start + lane] = WEAK;
   }
 }
 
