@@ -90,7 +90,8 @@ describe('the response of a network', () => {
     }
     const impedance = responseOf(elements, { quantity: 'impedance', nodes: ['s', 'out'] });
     const admittance = responseOf(elements, { quantity: 'admittance', nodes: ['s', 'out'] });
-    const [z, y] = [impedance.evaluate(1e5), admittance.evaluate(1e5)];
+    // Beside the resonance: at it the impedance is what rounding leaves of nothing.
+    const [z, y] = [impedance.evaluate(1.2e5), admittance.evaluate(1.2e5)];
     expect((z?.re ?? NaN) * (y?.re ?? NaN) - (z?.im ?? NaN) * (y?.im ?? NaN)).toBeCloseTo(1, 12);
     expect(impedance.hints).toEqual(admittance.hints);
   });
