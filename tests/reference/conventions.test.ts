@@ -77,7 +77,7 @@ describe('conventions', () => {
   it('has dots: coils coupled positively have voltages of one sign at their dots, an ideal transformer v₁ = n·v₂', () => {
     const solution = on(
       voltageSource('V1', '1', '0', 10),
-      { id: 'K1', kind: 'coupledInductors', nodes: ['1', '0', '2', '0'], inductances: [1, 4], coupling: 0.5 },
+      { id: 'TR1', kind: 'coupledInductors', nodes: ['1', '0', '2', '0'], inductances: [1, 4], coupling: 0.5 },
       resistor('R2', '2', '0', 1e15),
       { id: 'T1', kind: 'idealTransformer', nodes: ['1', '0', '3', '0'], ratio: 4 },
       resistor('R3', '3', '0', 5),

@@ -37,23 +37,23 @@ describe('controlled sources', () => {
       drive(),
       r('R1', 'in', 's', 1000),
       r('R2', 's', '0', 1000),
-      { id: 'E1', kind: 'voltageControlledVoltageSource', nodes: ['out', '0', 's', '0'], gain: -8 },
+      { id: 'CS1', kind: 'voltageControlledVoltageSource', nodes: ['out', '0', 's', '0'], gain: -8 },
       r('R3', 'out', '0', 50),
     ]);
     expect(answer.problems).toEqual([]);
     expectPhasor(answer.voltage('out'), -4, 0);
-    expectPhasor(answer.current('E1'), 4 / 50, 0);
-    expectPhasor(answer.current('E1', 1), 0, 0);
-    expectPhasor(answer.power('E1'), -16 / 50, 0);
+    expectPhasor(answer.current('CS1'), 4 / 50, 0);
+    expectPhasor(answer.current('CS1', 1), 0, 0);
+    expectPhasor(answer.power('CS1'), -16 / 50, 0);
   });
 
   it('a voltage-controlled current source drives from its first node through itself to its second', () => {
     const answer = solved([
       drive(),
-      { id: 'G1', kind: 'voltageControlledCurrentSource', nodes: ['0', 'out', 'in', '0'], transconductance: 0.02 },
+      { id: 'CS1', kind: 'voltageControlledCurrentSource', nodes: ['0', 'out', 'in', '0'], transconductance: 0.02 },
       c('C1', 'out', '0', 0.01),
     ]);
-    expectPhasor(answer.current('G1'), 0.02, 0);
+    expectPhasor(answer.current('CS1'), 0.02, 0);
     expectPhasor(answer.voltage('out'), 0, -2);
   });
 
@@ -65,7 +65,7 @@ describe('controlled sources', () => {
       drive(),
       sensed ?? r('R1', 'in', '0', 4),
       {
-        id: 'H1',
+        id: 'CS1',
         kind: 'currentControlledVoltageSource',
         nodes: ['out', '0'],
         sensedElement: sensed?.id ?? 'VS1',
@@ -80,7 +80,7 @@ describe('controlled sources', () => {
     const answer = solved([
       { id: 'IS1', kind: 'currentSource', nodes: ['0', 'a'], value: { rms: 2, phase: 90, frequency: null } },
       r('R1', 'a', '0', 1),
-      { id: 'F1', kind: 'currentControlledCurrentSource', nodes: ['0', 'out'], sensedElement: 'IS1', gain: 3 },
+      { id: 'CS1', kind: 'currentControlledCurrentSource', nodes: ['0', 'out'], sensedElement: 'IS1', gain: 3 },
       r('R2', 'out', '0', 5),
     ]);
     expectPhasor(answer.voltage('out'), 0, 30);
@@ -90,7 +90,7 @@ describe('controlled sources', () => {
     const answer = solved([
       drive(['in', '0']),
       r('R1', 'in', 'a', 100),
-      { id: 'G1', kind: 'voltageControlledCurrentSource', nodes: ['a', '0', 'a', '0'], transconductance: -0.005 },
+      { id: 'CS1', kind: 'voltageControlledCurrentSource', nodes: ['a', '0', 'a', '0'], transconductance: -0.005 },
     ]);
     expectPhasor(answer.voltage('a'), 2, 0);
   });
@@ -209,7 +209,7 @@ describe('operational amplifiers', () => {
 
   it('has a way back by a sensed current that enters what given voltages hold', () => {
     // An ammeter of 0 V in the load's way to the reference, or the source that the output drives, tells the input.
-    const back: Element = { id: 'H1', kind: 'currentControlledVoltageSource', nodes: ['m', '0'], sensedElement: 'A1', transresistance: 500 };
+    const back: Element = { id: 'CS1', kind: 'currentControlledVoltageSource', nodes: ['m', '0'], sensedElement: 'A1', transresistance: 500 };
     const amplifier: Element = { id: 'U1', kind: 'operationalAmplifier', nodes: ['in', 'm', 'out'] };
     const meter = (plus: string, rms: number): Element => ({ id: 'A1', kind: 'voltageSource', nodes: [plus, '0'], value: { rms, phase: 0, frequency: null } });
     const loaded = solved([drive(), amplifier, r('R1', 'out', 's', 1000), meter('s', 0), back]);
@@ -344,7 +344,7 @@ describe('what a list may not say', () => {
   });
 
   it('a sensed element that is not there, or has no current of its own', () => {
-    const sensing = { id: 'F1', kind: 'currentControlledCurrentSource', nodes: ['in', '0'], gain: 1 };
+    const sensing = { id: 'CS1', kind: 'currentControlledCurrentSource', nodes: ['in', '0'], gain: 1 };
     refused({ ...sensing, sensedElement: 'R9' }, /senses the current of R9, which is not in the list/);
     refused({ ...sensing }, /needs the id of an element/);
   });

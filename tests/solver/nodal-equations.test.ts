@@ -82,16 +82,16 @@ describe('nodalEquations', () => {
     const list = network(
       currentSource('J', '0', 'a', 1),
       inductor('L', 'a', '0', 1),
-      { id: 'H', kind: 'currentControlledVoltageSource', nodes: ['b', '0'], sensedElement: 'J', transresistance: 5 },
+      { id: 'CS', kind: 'currentControlledVoltageSource', nodes: ['b', '0'], sensedElement: 'J', transresistance: 5 },
       resistor('R', 'b', '0', 1),
     );
-    expect(texts(found(list, 50))).toEqual(['(+1/jωL)·V(a) = +J', '(+1/R)·V(b) + (+1)·I(H) = 0', '(+1)·V(b) = +HJ']);
+    expect(texts(found(list, 50))).toEqual(['(+1/jωL)·V(a) = +J', '(+1/R)·V(b) + (+1)·I(CS) = 0', '(+1)·V(b) = +CSJ']);
   });
 
   it('write coupled coils, transformers, amplifiers, lines and blocks by their own symbols', () => {
     const list = network(
       voltageSource('E', 'a', '0', 1),
-      { id: 'K', kind: 'coupledInductors', nodes: ['a', '0', 'b', '0'], inductances: [1, 2], coupling: 0.5 },
+      { id: 'TR', kind: 'coupledInductors', nodes: ['a', '0', 'b', '0'], inductances: [1, 2], coupling: 0.5 },
       { id: 'T', kind: 'idealTransformer', nodes: ['b', '0', 'c', '0'], ratio: 3 },
       { id: 'A', kind: 'operationalAmplifier', nodes: ['c', 'd', 'd'], openLoopGain: 1e5, gainBandwidth: 1e6, outputResistance: 50 },
       { id: 'N', kind: 'line', nodes: ['d', '0', 'e', '0'], impedance: 75, delay: 1e-9 },
@@ -99,8 +99,8 @@ describe('nodalEquations', () => {
     );
     expect(texts(found(list, 1000)).slice(5)).toEqual([
       '(+1)·V(a) = +E',
-      '(+1)·V(a) + (−jωK.1)·I(K) + (−jωM(K))·I(K,1) = 0',
-      '(+1)·V(b) + (−jωM(K))·I(K) + (−jωK.2)·I(K,1) = 0',
+      '(+1)·V(a) + (−jωTR.1)·I(TR) + (−jωM(TR))·I(TR,1) = 0',
+      '(+1)·V(b) + (−jωM(TR))·I(TR) + (−jωTR.2)·I(TR,1) = 0',
       '(+1)·V(b) + (−T)·V(c) = 0',
       '(+T)·I(T) + (+1)·I(T,1) = 0',
       '(−1)·V(c) + (+1 +1/A +jf/A)·V(d) + (−A/A −Ajf/A)·I(A,1) = 0',

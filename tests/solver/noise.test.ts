@@ -74,7 +74,7 @@ describe('noise', () => {
 
   it('of a resistance whose current is sensed is that of any other', () => {
     const plain = network(resistor('R', 'a', '0', 1e4), capacitor('C', 'a', '0', 1e-9));
-    const sensed = network(...plain.elements, { id: 'F', kind: 'currentControlledCurrentSource', nodes: ['b', '0'], sensedElement: 'R', gain: 5 }, resistor('Rb', 'b', '0', 1));
+    const sensed = network(...plain.elements, { id: 'CS', kind: 'currentControlledCurrentSource', nodes: ['b', '0'], sensedElement: 'R', gain: 5 }, resistor('Rb', 'b', '0', 1));
     expect(found(sensed, ['a', '0'], 1e4).density[0]).toBeCloseTo(found(plain, ['a', '0'], 1e4).density[0] ?? NaN, 22);
   });
 

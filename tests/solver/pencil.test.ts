@@ -46,10 +46,10 @@ describe('the pencil of a network', () => {
   });
 
   it('makes an unknown of a current that is asked for or sensed', () => {
-    const follower: Element = { id: 'F1', kind: 'currentControlledCurrentSource', nodes: ['2', '0'], sensedElement: 'R1', gain: 3 };
+    const follower: Element = { id: 'CS1', kind: 'currentControlledCurrentSource', nodes: ['2', '0'], sensedElement: 'R1', gain: 3 };
     const pencil = written(pencilOf([resistor('R1', '1', '0', 4), follower, capacitor('C1', '1', '2', 2), resistor('R2', '2', '0', 1)], { currents: [['C1', 0]] }));
     expect(read(pencil)).toEqual({
-      names: ['v 1', 'v 2', 'i R1', 'i F1', 'i C1'],
+      names: ['v 1', 'v 2', 'i R1', 'i CS1', 'i C1'],
       g: [
         [0, 0, 1, 0, 1],
         [0, 1, 0, 1, -1],
@@ -91,7 +91,7 @@ describe('the pencil of a network', () => {
   it('grounds a part of its own at its first node, unless the voltage to the rest is sensed', () => {
     const parts = [resistor('R1', '1', '0', 1), resistor('R2', 'x', 'y', 1)];
     expect(read(written(pencilOf(parts))).names).toEqual(['v 1', 'v y']);
-    const sensing: Element = { id: 'G1', kind: 'voltageControlledCurrentSource', nodes: ['1', '0', 'x', '1'], transconductance: 1 };
-    expect(read(written(pencilOf([...parts, sensing]))).names).toEqual(['v 1', 'v x', 'v y', 'i G1']);
+    const sensing: Element = { id: 'CS1', kind: 'voltageControlledCurrentSource', nodes: ['1', '0', 'x', '1'], transconductance: 1 };
+    expect(read(written(pencilOf([...parts, sensing]))).names).toEqual(['v 1', 'v x', 'v y', 'i CS1']);
   });
 });

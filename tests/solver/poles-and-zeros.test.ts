@@ -83,7 +83,7 @@ describe('poles and zeros of simple networks', () => {
       inductor(`L${id}`, `${id}a`, to, 1e-3),
       capacitor(`C${id}`, to, '0', 1e-7),
     ];
-    const list = network(voltageSource('V1', 's', '0', 1), ...tank('1', 's', 'm'), buffer('E1', 'm', 'n'), ...tank('2', 'n', 'o'));
+    const list = network(voltageSource('V1', 's', '0', 1), ...tank('1', 's', 'm'), buffer('CS1', 'm', 'n'), ...tank('2', 'n', 'o'));
     const { poles, stability } = found(polesAndZeros(list, toNode('o')));
     const sigma = -30 / 2e-3;
     const omega = Math.sqrt(1e10 - sigma ** 2);
@@ -207,7 +207,7 @@ describe('what a transfer function does not show', () => {
       voltageSource('V1', 's', '0', 1),
       resistor('R1', 's', 'a', 1e3),
       capacitor('C1', 'a', '0', 1e-6),
-      buffer('E1', 's', 'b'),
+      buffer('CS1', 's', 'b'),
       resistor('R2', 'b', 'c', -1e3),
       capacitor('C2', 'c', '0', 1e-6),
     );
@@ -237,18 +237,18 @@ describe('what a transfer function does not show', () => {
 
 describe('what a transfer function may give', () => {
   it('is a voltage of a node, between two, or of a port, or a current, as all analyses name them', () => {
-    const coils: Element = { id: 'K', kind: 'coupledInductors', nodes: ['a', '0', 'b', 'c'], inductances: [1e-3, 4e-3], coupling: 0.9 };
+    const coils: Element = { id: 'TR', kind: 'coupledInductors', nodes: ['a', '0', 'b', 'c'], inductances: [1e-3, 4e-3], coupling: 0.9 };
     const list = network(voltageSource('V1', 's', '0', 1), resistor('R1', 's', 'a', 10), coils, resistor('R2', 'b', 'c', 50), capacitor('C', 'c', '0', 1e-9));
     const of = (output: NetworkReading) => found(polesAndZeros(list, { kind: 'transfer', source: 'V1', output }));
     const between = of({ quantity: 'voltageBetween', nodes: ['b', 'c'] });
     expect(of({ quantity: 'elementVoltage', element: 'R2' })).toEqual(between);
-    expect(of({ quantity: 'elementVoltage', element: 'K', port: 1 })).toEqual(between);
-    expect(of({ quantity: 'elementVoltage', element: 'K' })).toEqual(of({ quantity: 'voltage', node: 'a' }));
+    expect(of({ quantity: 'elementVoltage', element: 'TR', port: 1 })).toEqual(between);
+    expect(of({ quantity: 'elementVoltage', element: 'TR' })).toEqual(of({ quantity: 'voltage', node: 'a' }));
     const gainOf = (output: NetworkReading): number => (of(output).gain ?? NaN) / (between.gain ?? NaN);
     expect(gainOf({ quantity: 'current', element: 'R2' }) * 50).toBeCloseTo(1, 12);
-    expect(gainOf({ quantity: 'current', element: 'K', port: 1 }) * -50).toBeCloseTo(1, 12);
-    const refusal = polesAndZeros(list, { kind: 'transfer', source: 'V1', output: { quantity: 'elementVoltage', element: 'K', port: 2 } });
-    expect(refused(refusal).message).toMatch(/K has no port 2/);
+    expect(gainOf({ quantity: 'current', element: 'TR', port: 1 }) * -50).toBeCloseTo(1, 12);
+    const refusal = polesAndZeros(list, { kind: 'transfer', source: 'V1', output: { quantity: 'elementVoltage', element: 'TR', port: 2 } });
+    expect(refused(refusal).message).toMatch(/TR has no port 2/);
   });
 });
 
@@ -314,7 +314,7 @@ describe('problems of poles and zeros', () => {
   });
 
   it('name what floats at all frequencies, and an amplifier without feedback', () => {
-    const floating = refused(polesAndZeros(network(...list.elements, { id: 'E1', kind: 'voltageControlledVoltageSource', nodes: ['3', '0', '2', 'x'], gain: 2 }, resistor('R3', '3', '2', 5)), toNode('3')));
+    const floating = refused(polesAndZeros(network(...list.elements, { id: 'CS1', kind: 'voltageControlledVoltageSource', nodes: ['3', '0', '2', 'x'], gain: 2 }, resistor('R3', '3', '2', 5)), toNode('3')));
     expect(floating).toMatchObject({ kind: 'singular', nodes: expect.arrayContaining(['x']) as unknown });
     const open = refused(polesAndZeros(network(...list.elements, amplifier('A1', '2', '0', 'o'), resistor('R2', 'o', '0', 10)), toNode('o')));
     expect(open).toMatchObject({ kind: 'singular', elements: expect.arrayContaining(['A1']) as unknown });

@@ -113,7 +113,7 @@ describe('a balun whose outputs’ mean is free at its own frequency', () => {
     expect(problem).toMatchObject(MEAN_IS_FREE);
     expect(problem.message).toMatch(/grows without bound/);
     // The noise of R3, by way of what senses it: none of the passive ones can.
-    const sensing: Element = { id: 'G1', kind: 'voltageControlledCurrentSource', nodes: ['a', '0', 'x', '0'], transconductance: 1e-3 };
+    const sensing: Element = { id: 'CS1', kind: 'voltageControlledCurrentSource', nodes: ['a', '0', 'x', '0'], transconductance: 1e-3 };
     const noisy = noise(network(...LOADED.elements, resistor('R3', 'x', '0', 1e3), sensing), ['a', 'b'], { frequencies: [F0] });
     expect(refused(noisy)).toMatchObject({ ...MEAN_IS_FREE, message: problem.message });
   });

@@ -127,7 +127,7 @@ describe('ResponseOperator', () => {
   });
 
   it('does not take for determined what an amplifier makes of a floating part’s common mode', () => {
-    const sense = { id: 'E', kind: 'voltageControlledVoltageSource', nodes: ['out', '0', 'a', '0'], gain: 2 } as const;
+    const sense = { id: 'CS', kind: 'voltageControlledVoltageSource', nodes: ['out', '0', 'a', '0'], gain: 2 } as const;
     const operator = operatorOf(network(...floating.elements, sense, resistor('RL', 'out', '0', 100)));
     fine(operator.prepare(50));
     const [a, b, out] = [node(operator, 'a'), node(operator, 'b'), node(operator, 'out')];

@@ -92,7 +92,7 @@ describe('sensitivity', () => {
     const list = network(
       voltageSource('E', 'a', '0', 1),
       resistor('R1', 'a', 'b', 10),
-      { id: 'K', kind: 'coupledInductors', nodes: ['b', '0', 'c', '0', 'd', '0'], inductances: [1e-3, 2e-3, 3e-3], coupling: [0.3, -0.2, 0.4] },
+      { id: 'TR', kind: 'coupledInductors', nodes: ['b', '0', 'c', '0', 'd', '0'], inductances: [1e-3, 2e-3, 3e-3], coupling: [0.3, -0.2, 0.4] },
       resistor('R2', 'c', '0', 20),
       resistor('R3', 'd', '0', 30),
     );
@@ -100,12 +100,12 @@ describe('sensitivity', () => {
     const { traces } = found(list, output, 1000);
     expect(traces.map(({ element, field, index }) => [element, field, index])).toEqual([
       ['R1', 'resistance', undefined],
-      ['K', 'inductances', 0],
-      ['K', 'inductances', 1],
-      ['K', 'inductances', 2],
-      ['K', 'coupling', 0],
-      ['K', 'coupling', 1],
-      ['K', 'coupling', 2],
+      ['TR', 'inductances', 0],
+      ['TR', 'inductances', 1],
+      ['TR', 'inductances', 2],
+      ['TR', 'coupling', 0],
+      ['TR', 'coupling', 1],
+      ['TR', 'coupling', 2],
       ['R2', 'resistance', undefined],
       ['R3', 'resistance', undefined],
     ]);
@@ -119,11 +119,11 @@ describe('sensitivity', () => {
     const list = network(
       voltageSource('E', 'a', '0', 1),
       resistor('R1', 'a', 'b', 10),
-      { id: 'K', kind: 'coupledInductors', nodes: ['b', '0', 'c', 'd'], inductances: [1e-3, 2e-3], coupling: 0.3 },
+      { id: 'TR', kind: 'coupledInductors', nodes: ['b', '0', 'c', 'd'], inductances: [1e-3, 2e-3], coupling: 0.3 },
       resistor('R2', 'c', 'd', 20),
     );
     const between = found(list, { quantity: 'voltageBetween', nodes: ['c', 'd'] }, 1000);
-    expect(found(list, { quantity: 'elementVoltage', element: 'K', port: 1 }, 1000)).toEqual(between);
+    expect(found(list, { quantity: 'elementVoltage', element: 'TR', port: 1 }, 1000)).toEqual(between);
     expect(found(list, { quantity: 'transfer', source: 'E', reading: { quantity: 'elementVoltage', element: 'R2' } }, 1000)).toEqual(between);
   });
 

@@ -121,7 +121,7 @@ describe('a sweep of a network with linked ports', () => {
       ...lowPass({ openLoopGain: 1e5, gainBandwidth: 1e6, outputResistance: 75 }),
       resistor('RL', 'out', 'x', 100),
       inductor('LL', 'x', '0', 1e-3),
-      { id: 'F', kind: 'currentControlledCurrentSource', nodes: ['0', 'x'], sensedElement: 'R1', gain: 3 },
+      { id: 'CS', kind: 'currentControlledCurrentSource', nodes: ['0', 'x'], sensedElement: 'R1', gain: 3 },
     );
     const frequencies = [200, 8000, 90_000];
     for (const of of [
@@ -159,7 +159,7 @@ describe('a sweep of a network with linked ports', () => {
         elements: [
           voltageSource('V', '1', '0', 1),
           resistor('R', '1', '2', 50),
-          { id: 'K', kind: 'coupledInductors', nodes: ['2', '0', '3', '0'], inductances: [1e-3, 2e-3], coupling: 0.7 },
+          { id: 'TR', kind: 'coupledInductors', nodes: ['2', '0', '3', '0'], inductances: [1e-3, 2e-3], coupling: 0.7 },
           resistor('RL', '3', '0', 100),
         ],
         of: { quantity: 'ratio', of: { quantity: 'voltage', node: '3' }, to: { quantity: 'current', element: 'V' } },
@@ -236,12 +236,12 @@ describe('a sweep of a network with linked ports', () => {
   it('is as little determined as solve has it where equations cancel exactly', () => {
     const list = network(
       voltageSource('V', 'a', '0', 1),
-      { id: 'E', kind: 'voltageControlledVoltageSource', nodes: ['a', 'b', 'b', 'e'], gain: 10 },
+      { id: 'CS', kind: 'voltageControlledVoltageSource', nodes: ['a', 'b', 'b', 'e'], gain: 10 },
       { id: 'T', kind: 'idealTransformer', nodes: ['d', 'c', 'b', 'e'], ratio: 2 },
       resistor('R1', 'd', 'c', 5),
       resistor('R2', 'c', '0', 1),
       {
-        id: 'K',
+        id: 'TR',
         kind: 'coupledInductors',
         nodes: ['b', 'a', 'a', '0'],
         inductances: [2.609432583034902e-3, 1.1847147547679026e-3],

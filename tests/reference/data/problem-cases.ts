@@ -49,7 +49,7 @@ function coupled(coupling: number): readonly Element[] {
   return [
     voltageSource('V1', '1', '0', 1),
     resistor('R1', '1', '2', 10),
-    { id: 'K1', kind: 'coupledInductors', nodes: ['2', '0', '3', '0'], inductances: [1e-3, 4e-3], coupling },
+    { id: 'TR1', kind: 'coupledInductors', nodes: ['2', '0', '3', '0'], inductances: [1e-3, 4e-3], coupling },
     resistor('R2', '3', '0', 100),
   ];
 }
@@ -204,7 +204,7 @@ export const PROBLEM_CASES: readonly ProblemCase[] = [
     title: 'coupling beyond 1',
     elements: coupled(1.01),
     frequency: 1000,
-    problem: { kind: 'invalid', elements: ['K1'], nodes: [], words: /coupling/ },
+    problem: { kind: 'invalid', elements: ['TR1'], nodes: [], words: /coupling/ },
     isSolved: false,
     figures: [],
   },
@@ -273,11 +273,11 @@ export const PROBLEM_CASES: readonly ProblemCase[] = [
     title: 'coils of negative inductance',
     elements: [
       ...REST,
-      { id: 'K1', kind: 'coupledInductors', nodes: ['9', '0', '3', '0'], inductances: [-1e-3, 4e-3], coupling: 0.5 },
+      { id: 'TR1', kind: 'coupledInductors', nodes: ['9', '0', '3', '0'], inductances: [-1e-3, 4e-3], coupling: 0.5 },
       resistor('R2', '3', '0', 100),
     ],
     frequency: 50,
-    problem: { kind: 'invalid', elements: ['K1'], nodes: [], words: /K1/ },
+    problem: { kind: 'invalid', elements: ['TR1'], nodes: [], words: /TR1/ },
     isSolved: false,
     figures: [],
   },
