@@ -1,5 +1,4 @@
 import type { BranchTable } from '../elements/branch-table';
-import { ADMITTANCE } from '../elements/branch-table';
 import type { Network } from './network';
 import type { Readings } from './readings';
 
@@ -16,8 +15,8 @@ const WORTHWHILE = 4;
  *
  * @param around the rows at each node whose current law may be used. Nodes with a given voltage are not among them
  *   where the current there is itself found by the law.
- * @param errorOf a bound on the error of each current that is not given; only the bounds decide, so a current is never
- *   replaced by a worse one. Only those of admittances are replaced; the bounds that are left are noted in the readings.
+ * @param errorOf a bound on the error of each admittance's current; only the bounds decide, so a current is never
+ *   replaced by a worse one. The bounds that are left are noted in the readings.
  */
 export function polishCurrents(
   network: Network,
@@ -70,7 +69,7 @@ function improveAt(
   for (const row of rows) {
     const error = errors.get(row) ?? 0;
     total += error;
-    if (error > worstError && branches.form[row] === ADMITTANCE) {
+    if (error > worstError) {
       worst = row;
       worstError = error;
     }
